@@ -26,12 +26,7 @@ export type RequirementKey = keyof Requirement;
 
 /** What a limit is measured in: %, s, a ratio without unit, degrees, input per output unit, output per input unit. */
 export type RequirementUnit =
-  | 'percent'
-  | 'seconds'
-  | 'ratio'
-  | 'degrees'
-  | 'input-per-output'
-  | 'output-per-input';
+  'percent' | 'seconds' | 'ratio' | 'degrees' | 'input-per-output' | 'output-per-input';
 
 export interface VerdictItem {
   readonly requirement: RequirementKey;

@@ -1,0 +1,70 @@
+import { ok, refuse, type Result } from '../../result';
+import { Breaks } from './breaks';
+import { DelayedInput } from './history';
+import { modeChange, settleMode } from './limit-events';
+import type { LoopEquations } from './loop-equations';
+import type { Solution } from './pieces';
+import { Stepper } from './stepper';
+
+export interface IntegrationSettings {
+  /** End and dead time in the dimensionless time. */
+  readonly end: number;
+  readonly delay: number;
+  readonly tolerance: number;
+  readonly budget: number;
+  /** By how many orders a jump of the controller output is smoothed on its way through plant and filter. */
+  readonly smoothing: number;
+}
+
+export type IntegrationRefusal = 'ODE_TOO_COSTLY' | 'ODE_DIVERGED';
+
+/**
+ * Integrates the loop with a continuous controller from rest over [0, end] by the method of steps: no run of the
+ * solver reaches across a moment at which a jump or kink arrives, and no step is longer than the dead time, so that
+ * the delayed output is always known.
+ */
+export function integrateContinuous(
+  equations: LoopEquations,
+  settings: IntegrationSettings,
+): Result<Solution, IntegrationRefusal> {
+  const { end, delay, tolerance } = settings;
+  const stepper = new Stepper(equations, { ...settings, longestStep: delay });
+  const history = new DelayedInput(stepper.solution, delay, equations.excitation.load);
+  const breaks = new Breaks(delay, settings.smoothing, end);
+  const inputAt = (x: number): number => history.at(x);
+  const output = (): number => equations.output;
+
+  const stopWithin = (from: number, to: number, resolveAt: (x: number) => void): number => {
+    const change = modeChange(equations, from, to, tolerance, resolveAt);
+    if (change !== null) breaks.arise(change, 1);
+    return change ?? to;
+  };
+  breaks.arise(0, 0);
+  while (stepper.x < end) {
+    history.restrict(stepper.x, breaks.next());
+    if (equations.limited)
+      settleMode(equations, tolerance, () => equations.resolve(stepper.state, inputAt(stepper.x)));
+    stepper.advance({ end: breaks.next(), inputAt, output, ...(equations.limited ? { stopWithin } : {}) });
+    breaks.pass(stepper.x);
+    const refusal = refusalOf(stepper, settings.budget);
+    if (refusal) return refusal;
+  }
+  return ok(stepper.solution);
+}
+
+/** Why the stepper had to give up, or null. */
+export function refusalOf(
+  stepper: Stepper,
+  budget: number,
+): ReturnType<typeof refuse<IntegrationRefusal>> | null {
+  if (stepper.diverged) {
+    return refuse('ODE_DIVERGED', 'The response grows without bound; only stable loops can be simulated.');
+  }
+  if (stepper.overBudget) {
+    return refuse(
+      'ODE_TOO_COSTLY',
+      `The loop has parts too fast for its horizon: more than ${budget} evaluations of its equations are needed.`,
+    );
+  }
+  return null;
+}

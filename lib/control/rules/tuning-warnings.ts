@@ -1,0 +1,45 @@
+import { formatNumber } from '../../units';
+import type { IdealController } from '../types';
+import type { UsedModel } from './pick-row';
+import type { RuleFacts } from './types';
+
+interface GivenSettings {
+  readonly lambdaS?: number;
+  readonly naturalFrequency?: number;
+}
+
+export const INTEGRAL_ONLY =
+  'Integral action only: the ideal form cannot say that, so its gain is 0 here; take the integral gain ki from the settings in the form of the source.';
+
+export function outsideRange({ deadTimeRatio }: RuleFacts, { parameters }: UsedModel): string[] {
+  const { tau, theta } = parameters;
+  if (deadTimeRatio === undefined || tau === undefined) return [];
+  const [low, high] = deadTimeRatio;
+  const ratio = theta / tau;
+  // Rounding of a plant's coefficients must not push a ratio at the limit outside.
+  if (ratio >= low * (1 - 1e-9) && ratio <= high * (1 + 1e-9)) return [];
+  const range = low === 0 ? `up to about ${high}` : `from ${low} to ${high}`;
+  return [
+    `Outside the published range: dead time over time constant is ${formatNumber(ratio, { significant: 3 })}, the rule holds ${range}.`,
+  ];
+}
+
+export function aboutDetuning({ shape }: UsedModel, { ti }: IdealController, detuning: number): string[] {
+  return detuning > 1 && ti < Infinity && shape.startsWith('integrator')
+    ? [
+        'On an integrating plant a lower gain with the same integral time damps less: watch the sensitivity peak.',
+      ]
+    : [];
+}
+
+export function unusedSettings({ setting }: RuleFacts, request: GivenSettings): string[] {
+  const unit = setting?.unit;
+  return [
+    ...(request.lambdaS !== undefined && unit !== 's'
+      ? ['The closed-loop time was not used: this rule has none.']
+      : []),
+    ...(request.naturalFrequency !== undefined && unit !== 'rad/s'
+      ? ['The natural frequency was not used: this rule has none.']
+      : []),
+  ];
+}

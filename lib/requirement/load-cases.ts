@@ -29,7 +29,9 @@ export function judgeLoadCases(requirement: Requirement, cases: readonly LoadCas
   const perCase = cases.map(({ name, check }) => ({ name, verdict: judge(requirement, check) }));
   const index = indexOfLeast(cases.map(({ check }, at) => rank(check, perCase[at].verdict)));
   const worst = { name: cases[index].name, index };
-  const items = perCase[0].verdict.items.map((_, at) => worstItem(perCase, at));
+  // The case that decides comes first, so that it is named where others are as bad.
+  const worstFirst = [perCase[index], ...perCase.filter((_, at) => at !== index)];
+  const items = worstFirst[0].verdict.items.map((_, at) => worstItem(worstFirst, at));
   const { pass } = perCase[index].verdict;
   return {
     perCase,

@@ -12,10 +12,13 @@ export interface ParseNumberOptions {
 export type ParseNumberCode = 'EMPTY' | 'NOT_A_NUMBER' | 'AMBIGUOUS' | 'INFINITE' | 'OFF' | 'UNIT_MISMATCH';
 
 const SUPERSCRIPTS = '⁰¹²³⁴⁵⁶⁷⁸⁹';
-const NUMBER = /^([+-]?)\s*((?:\d[\d.,' ]*)?[.,]?\d+[.,]?|\d+)(?:\s*[·×*]\s*10\^?([+-]?\d+)|[eE]([+-]?\d+))?/;
-/** What may stand before the number: a name such as 'Kp =', or a unit. */
-const LEADING = /^[\p{L}°%µΩ][^\d+\-.,∞]*?[\s=:]*(?=[+\-.,\d∞])/u;
-const UNIT = /^(?:[\p{L}°%µΩ"'′″(]|1\/).*$/u;
+/** Sign, digits with their separators (a blank before '1/s' is none), power of ten. */
+const NUMBER =
+  /^([+-]?)\s*((?:\d(?:[\d.,']| (?!1\/))*)?[.,]?\d+[.,]?|\d+)(?:\s*[·×*]\s*10\^?([+-]?\d+)|[eE]([+-]?\d+))?/;
+/** What may stand before the number: a name such as 'Kp =', or a unit, set off by a blank or a sign. */
+const LEADING = /^[\p{L}°%µΩ][^\d+\-.,∞]*?[\s=:]+(?=[+\-.,\d∞])/u;
+/** What may stand behind it. Digits only as exponents ('m/s2'), so that a letter typed for a digit is found out. */
+const UNIT = /^(?![eE][+-]?$)(?:1\/)?[\p{L}°%µΩ"'′″(](?:[^\d.,]|(?<=\p{L}\^?-?)[123](?!\p{L}|\d))*$/u;
 
 /**
  * Reads a number as people type it: decimal point or comma, any minus sign, powers of ten as 1e-3 or 1.2·10⁻⁷, a unit

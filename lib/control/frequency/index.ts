@@ -1,0 +1,1 @@
+export { bodeCurve, bodeRange, frequencyResponse, type BodeCurve, type FrequencyResponse } from './bode';

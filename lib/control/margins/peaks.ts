@@ -1,0 +1,139 @@
+import { lnMagnitudeAtInfinity, nodeAfter, type CurveNode, type LoopCurve } from '../frequency/curve';
+import { isSingular, middle, slack } from '../frequency/crossings';
+import type { ScaledLoop } from '../frequency/scaled-loop';
+import type { LimitGains } from './gain-margin';
+
+/** Sensitivity 1/(1 + L), or complementary sensitivity L/(1 + L). */
+export type Sensitivity = 'S' | 'T';
+
+export interface Peak {
+  readonly value: number;
+  /** Frequency of the peak, 0 or Infinity where it is a limit. */
+  readonly w: number;
+}
+
+/** Stretches of the curve this short (rad, and as much in ln|L|) have at most one peak inside. */
+const SHORT = 0.25;
+const DEEPEST_SPLIT = 60;
+/** Peaks that differ by less, relative, are equal: the lowest frequency is named, limits first. */
+const SAME = 1e-11;
+
+/**
+ * Largest |S| or |T| over 0 ≤ w ≤ infinity, limits included, by branch and bound: a stretch of the curve lies in a
+ * box in ln|L| and phase, whose distance from -1 says whether the stretch can hold a higher peak than the best known.
+ *
+ * T is S with 1/L in the place of L, so one search serves both.
+ */
+export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, limits: LimitGains): Peak {
+  const sign = which === 'S' ? 1 : -1;
+  const ends = endPeak(loop, sign);
+  let best: Peak | null = null;
+  let known = ends.value;
+  for (const limit of [limits.above, limits.below]) {
+    if (limit !== null) known = Math.max(known, 1 / Math.abs(Math.expm1(-sign * limit.lnFactor)));
+  }
+  for (const node of nodes) known = Math.max(known, sensitivity(sign * node.ln, node.phase));
+  known *= 1 - 1e-9;
+
+  function search(a: CurveNode, b: CurveNode, depth: number): void {
+    const lnReach = slack(a, b, 'ln');
+    const phaseReach = slack(a, b, 'phase');
+    if (highestInBox(a, b, sign, lnReach, phaseReach) <= known) return;
+    const short =
+      Math.abs(a.phase - b.phase) + phaseReach < SHORT &&
+      (Math.abs(a.ln - b.ln) + lnReach < SHORT || Math.max(sign * a.ln, sign * b.ln) < -4);
+    if (!short && depth < DEEPEST_SPLIT) {
+      const between = middle(loop, a, b);
+      search(a, between, depth + 1);
+      search(between, b, depth + 1);
+      return;
+    }
+    const from = a.w === 0 ? nudged(loop, a, b) : a;
+    if (!(growth(sign, from) > 0 && growth(sign, b) <= 0)) return;
+    const peak = climb(loop, from, b, sign);
+    known = Math.max(known, peak.value * (1 - 1e-9));
+    if (best === null || peak.value > best.value * (1 + SAME)) best = peak;
+  }
+
+  for (let i = 1; i < nodes.length; i += 1)
+    if (!isSingular(nodes[i - 1], nodes[i])) search(nodes[i - 1], nodes[i], 0);
+  const inside = best as Peak | null;
+  if (inside === null) return ends;
+  // A limit at infinity that only the crossovers of a pure dead time reach is reached by the first of them.
+  const reached = ends.w === Infinity && loop.deadTime > 0 && loop.relativeDegree === 0;
+  return inside.value > ends.value * (reached ? 1 - SAME : 1 + SAME) ? inside : ends;
+}
+
+/** Upper bound of 1/|1 + L| over the box around the stretch; sign = -1 takes 1/L for L. */
+function highestInBox(a: CurveNode, b: CurveNode, sign: number, lnReach: number, phaseReach: number): number {
+  const lowest = Math.min(a.phase, b.phase) - phaseReach;
+  const highest = Math.max(a.phase, b.phase) + phaseReach;
+  const passesMinusOne =
+    Math.floor((highest - Math.PI) / (2 * Math.PI)) > Math.floor((lowest - Math.PI) / (2 * Math.PI));
+  const towards = passesMinusOne ? 1 : Math.max(-Math.cos(lowest), -Math.cos(highest));
+  const smallest = Math.exp(Math.min(sign * a.ln, sign * b.ln) - lnReach);
+  const largest = Math.exp(Math.max(sign * a.ln, sign * b.ln) + lnReach);
+  if (smallest === Infinity) return 0;
+  const size = Math.min(Math.max(towards, smallest), largest);
+  return 1 / Math.sqrt((size - 1) ** 2 + 2 * size * (1 - towards));
+}
+
+/** 1/|1 + L| from ln|L| and phase, exact near L = -1. */
+function sensitivity(ln: number, phase: number): number {
+  if (ln === Infinity) return 0;
+  const beyond = Math.expm1(ln);
+  const beside = 2 * Math.exp(ln / 2) * Math.cos(phase / 2);
+  return 1 / Math.sqrt(beyond * beyond + beside * beside);
+}
+
+/** Positive while |S| (sign = 1) or |T| (sign = -1) grows with w. */
+function growth(sign: number, at: Pick<CurveNode, 'ln' | 'phase' | 'lnSlope' | 'phaseSlope'>): number {
+  const size = Math.exp(sign * at.ln);
+  return Math.sin(at.phase) * at.phaseSlope - (size + Math.cos(at.phase)) * sign * at.lnSlope;
+}
+
+/** At w = 0 every slope vanishes or is infinite: the stretch is judged from a little further on. */
+function nudged(loop: ScaledLoop, origin: CurveNode, b: CurveNode): CurveNode {
+  return nodeAfter(loop, origin, b.w * 1e-3);
+}
+
+/**
+ * The peak between a, where the value grows, and b, where it falls: false position on the growth, halving the weight
+ * of an end that stays put (Illinois).
+ */
+function climb(loop: ScaledLoop, a: CurveNode, b: CurveNode, sign: number): Peak {
+  let low = a.w;
+  let high = b.w;
+  let growthLow = growth(sign, a);
+  let growthHigh = growth(sign, b);
+  let lastSide = 0;
+  let peak = b;
+  for (let round = 0; round < 80 && growthHigh < 0 && high - low > 1e-13 * high; round += 1) {
+    const guess = low + ((high - low) * growthLow) / (growthLow - growthHigh);
+    peak = nodeAfter(loop, a, guess > low && guess < high ? guess : (low + high) / 2);
+    const here = growth(sign, peak);
+    if (here === 0) break;
+    const side = Math.sign(here);
+    if (side > 0) {
+      low = peak.w;
+      growthLow = here;
+      if (lastSide === side) growthHigh /= 2;
+    } else {
+      high = peak.w;
+      growthHigh = here;
+      if (lastSide === side) growthLow /= 2;
+    }
+    lastSide = side;
+  }
+  return { value: sensitivity(sign * peak.ln, peak.phase), w: peak.w };
+}
+
+/** The larger of the limits of |S| or |T| at w = 0 and w -> infinity. */
+function endPeak(loop: ScaledLoop, sign: number): Peak {
+  const lnLow = loop.originOrder === 0 ? loop.lnLowGain : loop.originOrder * Infinity;
+  const lnEnd = lnMagnitudeAtInfinity(loop);
+  const atZero = sensitivity(sign * lnLow, loop.lowSign < 0 ? Math.PI : 0);
+  // With dead time L(jw) keeps turning, so that its phase comes back to -180° for ever.
+  const atInfinity = sensitivity(sign * lnEnd, loop.deadTime > 0 || loop.gainSign < 0 ? Math.PI : 0);
+  return atInfinity > atZero * (1 + SAME) ? { value: atInfinity, w: Infinity } : { value: atZero, w: 0 };
+}

@@ -2,7 +2,7 @@
 
 import { useId, type Dispatch } from 'react';
 import type { Convention, Conversion, DeviceValues } from '@/lib/control/forms';
-import { RULES, type RuleId } from '@/lib/control/rules';
+import { RULES } from '@/lib/control/rules';
 import type { ControllerType, IdealController } from '@/lib/control/types';
 import { formatNumber, formatTimeS } from '@/lib/units';
 import { conventionWords } from '../gain-card/convention-words';
@@ -57,7 +57,7 @@ function RuleChoice({ state, dispatch, preview }: GainsProps) {
         onChange={(event) => {
           const id = event.target.value;
           const chosen = RULES.find((one) => one.id === id);
-          if (chosen) dispatch({ do: 'rule', rule: chosen.id as RuleId, types: chosen.types });
+          if (chosen) dispatch({ do: 'rule', rule: chosen.id, types: TYPES.filter((type) => chosen.types.includes(type)) });
           else dispatch({ do: 'by-hand', start: preview?.controller ?? null });
         }}
         hint={rule && state.source === 'rule' ? rule.aim : undefined}

@@ -1,7 +1,7 @@
 import { describePlant, type PlantDescription } from '../../lib/control/describe';
 import { bodeCurve, type BodeCurve } from '../../lib/control/frequency';
 import { parsePlantText, type ParsedPlant } from '../../lib/control/plant-text';
-import { tune, type RuleId, type Tuning } from '../../lib/control/rules';
+import { dialMaximum, RULES, tune, type RuleId, type Tuning } from '../../lib/control/rules';
 import { idealController, type ControllerType, type IdealController } from '../../lib/control/types';
 import { judgeLoadCases, type LoadCaseVerdict, type Requirement } from '../../lib/requirement';
 import type { Result } from '../../lib/result';
@@ -56,7 +56,9 @@ function gainsFor(request: PreviewRequest, plants: (ParsedPlant | null)[]) {
   }
   const plant = plants[request.tuneOn]?.plant;
   if (!plant) return { tuning: null, controller: null };
-  const { rule, type, aggressiveness, variant } = gains;
+  const { rule, type, variant } = gains;
+  const facts = RULES.find(({ id }) => id === rule);
+  const aggressiveness = Math.min(gains.aggressiveness, facts ? dialMaximum(facts) : 1);
   const tuning = tune({ plant, rule, type, aggressiveness, variant });
   return { tuning, controller: tuning.ok ? { ...tuning.value.controller, ...terms } : null };
 }

@@ -45,7 +45,7 @@ function LimitField({
           placeholder="none"
           aria-invalid={error ? true : undefined}
           aria-describedby={error ? `${id}-error` : undefined}
-          title={item.sentence}
+          title={item.meaning}
           onChange={(event) => dispatch({ do: 'limit', key: item.key, text: event.target.value })}
           className="figure h-9 w-16 bg-transparent text-right font-semibold outline-none"
         />

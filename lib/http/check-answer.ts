@@ -44,7 +44,17 @@ function setpointAnswer(r: SetpointResponse) {
 
 function loadAnswer(r: LoadResponse) {
   const { peak, final, iae, t, y, u } = r;
-  return { horizon: r.horizonS, peak, peakTime: r.peakTimeS, final, recoveryTime: r.recoveryTimeS, iae, t, y, u };
+  return {
+    horizon: r.horizonS,
+    peak,
+    peakTime: r.peakTimeS,
+    final,
+    recoveryTime: r.recoveryTimeS,
+    iae,
+    t,
+    y,
+    u,
+  };
 }
 
 export function verdictAnswer(verdict: Verdict) {

@@ -40,5 +40,8 @@ export function unknownProblem(id: string): Response {
     status: 500,
     detail: `It is not your doing. Give this number to whoever looks after the server: ${id}.`,
   };
-  return new Response(JSON.stringify(body), { status: 500, headers: { 'content-type': 'application/problem+json' } });
+  return new Response(JSON.stringify(body), {
+    status: 500,
+    headers: { 'content-type': 'application/problem+json' },
+  });
 }

@@ -18,15 +18,23 @@ function wordsFor(path: PropertyKey[]): string {
 
 /** Malformed input is 400; a well-formed request that asks for the impossible (an improper plant, say) is 422. */
 export function schemaError(error: z.ZodError): FettleError {
-  const fields: FieldProblem[] = error.issues.map((issue) => ({ path: wordsFor(issue.path), message: issue.message }));
-  const impossible = error.issues.every((issue) => issue.code === 'custom' && issue.params?.impossible === true);
+  const fields: FieldProblem[] = error.issues.map((issue) => ({
+    path: wordsFor(issue.path),
+    message: issue.message,
+  }));
+  const impossible = error.issues.every(
+    (issue) => issue.code === 'custom' && issue.params?.impossible === true,
+  );
   const first = fields[0];
   const detail = first.path ? `${first.path}: ${first.message}` : first.message;
   return new FettleError(impossible ? 'INVALID' : 'MALFORMED', detail, { fields });
 }
 
 /** Reads and checks a JSON body; every way in which it can be wrong has its own answer. */
-export async function readJson<Schema extends z.ZodType>(request: Request, schema: Schema): Promise<z.output<Schema>> {
+export async function readJson<Schema extends z.ZodType>(
+  request: Request,
+  schema: Schema,
+): Promise<z.output<Schema>> {
   const type = request.headers.get('content-type') ?? '';
   const text = await bodyText(request);
   if (text.trim() !== '' && !/^application\/([\w.+-]+\+)?json\b/i.test(type))

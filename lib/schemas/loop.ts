@@ -10,9 +10,14 @@ import type { Requirement } from '../requirement';
 const finite = z.number();
 const positive = z.number().positive();
 const notNegative = z.number().min(0);
-const coefficients = z.array(finite).min(1, 'Give at least one coefficient.').max(41, 'Too many coefficients.');
+const coefficients = z
+  .array(finite)
+  .min(1, 'Give at least one coefficient.')
+  .max(41, 'Too many coefficients.');
 
-export const numberOrInf = z.union([z.number(), z.literal('inf')]).transform((value) => (value === 'inf' ? Infinity : value));
+export const numberOrInf = z
+  .union([z.number(), z.literal('inf')])
+  .transform((value) => (value === 'inf' ? Infinity : value));
 
 /** A plant by its coefficients in descending powers, or as a text in any accepted notation. */
 export const plantShape = z
@@ -24,7 +29,8 @@ export const plantShape = z
     { error: 'Give the plant as {num, den, delay} with lists of finite numbers, or as {text}.' },
   )
   .transform((given, context): { plant: Plant; text?: string } => {
-    const read = 'text' in given ? parsePlantText(given.text) : validatePlant(given.num, given.den, given.delay ?? 0);
+    const read =
+      'text' in given ? parsePlantText(given.text) : validatePlant(given.num, given.den, given.delay ?? 0);
     if (!read.ok) {
       context.addIssue({ code: 'custom', message: read.message, params: { impossible: true } });
       return z.NEVER;
@@ -48,7 +54,9 @@ export const controllerShape = z
   })
   .transform((given): IdealController => {
     const { kp, ti, td, n, b, c, tf, filterOrder } = given;
-    const set = Object.fromEntries(Object.entries({ td, n, b, c }).filter(([, value]) => value !== undefined));
+    const set = Object.fromEntries(
+      Object.entries({ td, n, b, c }).filter(([, value]) => value !== undefined),
+    );
     return idealController({
       kp,
       ...set,
@@ -90,10 +98,15 @@ export const requirementShape = z
   .transform((given): Requirement => given);
 
 export const loadCasesShape = z
-  .array(z.object({ name: z.string().trim().min(1, 'Give the load case a name.').max(60), plant: plantShape }))
+  .array(
+    z.object({ name: z.string().trim().min(1, 'Give the load case a name.').max(60), plant: plantShape }),
+  )
   .min(1, 'At least one load case is needed.')
   .max(12, 'At most 12 load cases.')
-  .refine((cases) => new Set(cases.map(({ name }) => name)).size === cases.length, 'Two load cases have the same name.');
+  .refine(
+    (cases) => new Set(cases.map(({ name }) => name)).size === cases.length,
+    'Two load cases have the same name.',
+  );
 
 /** What an axis' plant is given as: one plant (the load case "nominal"), or several named load cases. */
 export const plantOrLoadCases = { plant: plantShape.optional(), loadCases: loadCasesShape.optional() };

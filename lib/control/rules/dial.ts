@@ -39,22 +39,20 @@ const NO_SHARPER =
 /**
  * The setting of a rule that has one: given, or from the dial, or as the source recommends.
  *
- * @param range the range for the model at hand; null when the model has no time to derive it from
+ * @param range the range for the model at hand; a reason or null when the model gives none
  * @param given the setting itself, overrides the dial
  * @param aggressiveness 0 to 1
  */
 export function chooseSetting(
   setting: RuleSetting,
-  range: SettingRange | null,
+  range: SettingRange | string | null,
   given: number | undefined,
   aggressiveness: number | undefined,
 ): Result<ChosenSetting, DialCode> {
-  if (range === null) {
-    if (given !== undefined) return ok(withoutRange(setting, given));
-    return refuse(
-      'SETTING_NEEDED',
-      `This model has neither a lag nor a dead time to derive ${setting.symbol} from: give ${setting.symbol} in ${setting.unit}.`,
-    );
+  if (range === null || typeof range === 'string') {
+    const reason = range ?? `The model has neither a lag nor a dead time to derive ${setting.symbol} from`;
+    if (given !== undefined) return ok(withoutRange(setting, given, reason));
+    return refuse('SETTING_NEEDED', `${reason}: give ${setting.symbol} in ${setting.unit}.`);
   }
   const maximum = range.sharp === null ? MIDDLE : 1;
   const position = aggressiveness ?? MIDDLE;
@@ -111,7 +109,7 @@ export function dialMaximum(rule: Pick<RuleDefinition, 'setting'>): number {
   return rule.setting === null || rule.setting.name === 'crossover_time' ? MIDDLE : 1;
 }
 
-function withoutRange({ symbol, unit }: RuleSetting, given: number): ChosenSetting {
+function withoutRange({ symbol, unit }: RuleSetting, given: number, reason: string): ChosenSetting {
   return {
     setting: given,
     detuning: 1,
@@ -124,7 +122,7 @@ function withoutRange({ symbol, unit }: RuleSetting, given: number): ChosenSetti
       calm: given,
       sharp: given,
       maximum: MIDDLE,
-      reason: `The model has neither a lag nor a dead time that could set a range for ${symbol}.`,
+      reason: `${reason}.`,
     },
     warnings: [],
   };

@@ -8,8 +8,14 @@ import type { SettingRange } from './types';
 const ALPHA = 1;
 /** Recommended natural frequency over the least one that the formulas allow. */
 const OVER_LEAST = 5;
-/** Largest product of natural frequency and dead time that is recommended: the rule leaves the dead time out. */
-const DEAD_TIME_LIMIT = 0.5;
+/**
+ * Largest products of natural frequency and dead time at the recommendation and at the sharp end: the rule leaves the
+ * dead time out, and beyond them the sensitivity peak passes about 2 and 4 (own computation on the rows below).
+ */
+const DEAD_TIME_LIMIT = 0.15;
+const SHARP_DEAD_TIME_LIMIT = 0.25;
+/** Calm end over the least natural frequency, so that every position of the dial has a controller. */
+const CALM_OVER_LEAST = 1.25;
 
 /**
  * Pole placement, exact without dead time, in the parallel form. PI on k/(τs + 1): kp = (2ζωτ − 1)/k, ki = ω²τ/k ·
@@ -30,9 +36,10 @@ export const polePlacement = defineRule({
     symbol: 'ω',
     unit: 'rad/s',
     recommended:
-      'No source names one; 5 times the least frequency that the formulas allow, at most 0.5/θ, with a damping ratio of 0.7.',
+      'No source names one; 5 times the least frequency that the formulas allow, at most 0.15/θ, with a damping ratio of 0.7.',
   },
   variants: [],
+  exactOnly: true,
   rows: [
     row('first-order', 'PI', {
       range: ({ tau, theta }, zeta) => range(1 / (2 * zeta * tau), theta),
@@ -117,14 +124,18 @@ function leastForPid(a1: number, a0: number, zeta: number, alpha: number): numbe
   return Math.max(Math.sqrt(a0 / (1 + 2 * zeta * alpha)), a1 / (alpha + 2 * zeta));
 }
 
-function range(least: number, theta: number): SettingRange | null {
+function range(least: number, theta: number): SettingRange | string | null {
   const fromPlant = least > 0 ? OVER_LEAST * least : Infinity;
   const recommended = theta > 0 ? Math.min(fromPlant, DEAD_TIME_LIMIT / theta) : fromPlant;
   if (recommended === Infinity) return null;
+  const calmest = CALM_OVER_LEAST * least;
+  if (recommended < calmest) {
+    return 'The rule leaves the dead time out, and this one is too long for that beside the lags of the plant';
+  }
   return {
     recommended,
-    calm: recommended / CALM_FACTOR,
-    sharp: 2 * recommended,
+    calm: Math.max(recommended / CALM_FACTOR, calmest),
+    sharp: theta > 0 ? Math.min(2 * recommended, SHARP_DEAD_TIME_LIMIT / theta) : 2 * recommended,
     note: 'No source recommends a natural frequency; the middle of the dial is the choice of this program.',
   };
 }

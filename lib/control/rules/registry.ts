@@ -51,6 +51,6 @@ export function findRule(id: string): RuleDefinition<RuleId> | null {
   return DEFINITIONS.find((rule) => rule.id === id) ?? null;
 }
 
-function factsOf({ rows: _, ...facts }: RuleDefinition<RuleId>): Rule {
+function factsOf({ rows: _rows, exactOnly: _exactOnly, ...facts }: RuleDefinition<RuleId>): Rule {
   return facts;
 }

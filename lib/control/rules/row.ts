@@ -4,7 +4,7 @@ import type { ModelOf, ModelShape, Row, RuleDefinition, RuleModel, SettingRange,
 interface RowParts<Shape extends ModelShape> {
   readonly variant?: string;
   readonly objection?: (model: ModelOf<Shape>) => string | null;
-  readonly range?: (model: ModelOf<Shape>, dampingRatio: number) => SettingRange | null;
+  readonly range?: (model: ModelOf<Shape>, dampingRatio: number) => SettingRange | string | null;
   readonly settings: (
     model: ModelOf<Shape>,
     setting: number,

@@ -5,7 +5,14 @@ import { chooseDetuning, chooseSetting, type ChosenSetting, type Dial, type Dial
 import { detuned, toIdeal, type NativeSettings } from './native';
 import { pickRow, type PickCode, type PickedRow, type UsedModel } from './pick-row';
 import { findRule, type RuleId } from './registry';
-import { aboutDetuning, INTEGRAL_ONLY, outsideRange, unusedSettings } from './tuning-warnings';
+import {
+  aboutDetuning,
+  aboutLoop,
+  aboutModel,
+  INTEGRAL_ONLY,
+  outsideRange,
+  unusedSettings,
+} from './tuning-warnings';
 import type { RuleDefinition, TuningType } from './types';
 
 export interface TuneRequest {
@@ -62,7 +69,10 @@ export function tune(request: TuneRequest): Result<Tuning, TuneCode> {
   if (rule === null) return refuse('UNKNOWN_RULE', `There is no rule “${String(request.rule)}”.`);
   const offered = checkOffer(rule, request);
   if (!offered.ok) return offered;
-  const picked = pickRow(rule, request);
+  const picked = pickRow(
+    rule,
+    rule.setting?.name === 'tau_c' ? { ...request, tauCS: request.lambdaS } : request,
+  );
   if (!picked.ok) return picked;
   const zeta = request.dampingRatio ?? DEFAULT_DAMPING_RATIO;
   const chosen = choose(rule, picked.value, request, zeta);
@@ -148,7 +158,9 @@ function settle(
     usedModel: used,
     dial,
     warnings: [
+      ...aboutLoop(request.plant, controller),
       ...warnings,
+      ...aboutModel(used),
       ...outsideRange(rule, used),
       ...row.warnings(model, setting),
       ...aboutDetuning(used, controller, detuning),

@@ -1,5 +1,6 @@
 import { formatNumber } from '../../units';
-import type { IdealController } from '../types';
+import { isStable } from '../stability';
+import type { IdealController, Plant } from '../types';
 import type { UsedModel } from './pick-row';
 import type { RuleFacts } from './types';
 
@@ -22,6 +23,29 @@ export function outsideRange({ deadTimeRatio }: RuleFacts, { parameters }: UsedM
   return [
     `Outside the published range: dead time over time constant is ${formatNumber(ratio, { significant: 3 })}, the rule holds ${range}.`,
   ];
+}
+
+/** A model further from the plant than this, relative to its final value, is worth a word. */
+const NOTABLE_MODEL_ERROR = 0.1;
+
+export function aboutModel({ method, error }: UsedModel): string[] {
+  if (error !== undefined && error > NOTABLE_MODEL_ERROR) {
+    const percent = formatNumber(100 * error, { significant: 2 });
+    return [
+      `The settings are for a reduced model (${method}) whose step response differs from the plant's by up to ${percent} % of the final value.`,
+    ];
+  }
+  return method === 'step fit' && error === undefined
+    ? ['The settings are for an integrating model fitted to a plant whose further poles or zeros oscillate.']
+    : [];
+}
+
+export function aboutLoop(plant: Plant | undefined, controller: IdealController): string[] {
+  return plant === undefined || controller.kp === 0 || isStable(plant, controller)
+    ? []
+    : [
+        `With these settings the loop around the plant itself is unstable (derivative filter N = ${controller.n}).`,
+      ];
 }
 
 export function aboutDetuning({ shape }: UsedModel, { ti }: IdealController, detuning: number): string[] {

@@ -43,8 +43,8 @@ export interface Row {
   readonly variant: string | null;
   /** A sentence when the row does not hold for this model, else null. */
   readonly objection: (model: RuleModel) => string | null;
-  /** The range of the setting; null when the model has no time to derive it from. */
-  readonly range: (model: RuleModel, dampingRatio: number) => SettingRange | null;
+  /** The range of the setting; a reason or null (no lag and no dead time) when the model gives it none. */
+  readonly range: (model: RuleModel, dampingRatio: number) => SettingRange | string | null;
   /** The settings, or a sentence when the formula has no possible controller here. */
   readonly settings: (model: RuleModel, setting: number, dampingRatio: number) => NativeSettings | string;
   readonly warnings: (model: RuleModel, setting: number) => readonly string[];
@@ -87,4 +87,6 @@ export interface RuleFacts<Id extends string = string> {
 
 export interface RuleDefinition<Id extends string = string> extends RuleFacts<Id> {
   readonly rows: readonly Row[];
+  /** The rule is exact algebra for its plants and not applied to a reduced model. */
+  readonly exactOnly?: true;
 }

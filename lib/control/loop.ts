@@ -58,6 +58,13 @@ export function openLoop(plant: Plant, controller: IdealController): TransferFun
   return { num, den, deadTimeS: plant.deadTimeS };
 }
 
+/** The plant alone, without leading zero coefficients. @throws RangeError for a plant outside its range */
+export function plantTransfer(plant: Plant): TransferFunction {
+  checkPlant(plant);
+  return { num: trimmed(plant.num), den: trimmed(plant.den), deadTimeS: plant.deadTimeS };
+}
+
+/** @throws RangeError for a plant that is improper, empty, not finite or with a negative dead time */
 export function checkPlant(plant: Plant): void {
   const { num, den, deadTimeS } = plant;
   if (num.length === 0 || den.length === 0 || ![...num, ...den].every(Number.isFinite))

@@ -1,7 +1,7 @@
-import { loopCurve, type LoopCurve } from './frequency/curve';
+import { loopCurve } from './frequency/curve';
 import { unitGainCrossings } from './frequency/crossings';
 import { loopFactors } from './frequency/loop-factors';
-import { scaledLoop } from './frequency/scaled-loop';
+import { ScaledLoop } from './frequency/scaled-loop';
 import { openLoop, type TransferFunction } from './loop';
 import { add } from './polynomial';
 import type { ComplexNumber } from './roots';
@@ -25,10 +25,8 @@ export function isStable(plant: Plant, controller: IdealController): boolean {
   const transfer = openLoop(plant, controller);
   const byPolynomial = stableByPolynomial(transfer);
   if (byPolynomial !== null) return byPolynomial;
-  const loop = scaledLoop(plant, controller);
-  if (loop === null) return isHurwitz(transfer.den);
-  const curve = loopCurve(loop);
-  return stableByCount(plant, controller, curve, unitGainCrossings(curve));
+  const loop = new ScaledLoop(transfer, loopFactors(plant, controller));
+  return stableByCount(loop, unitGainCrossings(loopCurve(loop)));
 }
 
 /** The answer where no count is needed: no dead time, a loop gain that does not fall off, or a root at the origin. */
@@ -47,13 +45,8 @@ export function stableByPolynomial({ num, den, deadTimeS }: TransferFunction): b
  * that of P·e^(-θs), up to the phases of 1 + L and 1 + 1/L, which stay within ±90° and jump at each crossover.
  * Poles on the axis lie where P counts and zeros on the axis where Q counts, so that neither needs a detour.
  */
-export function stableByCount(
-  plant: Plant,
-  controller: IdealController,
-  { loop }: LoopCurve,
-  crossings: readonly { w: number; phase: number }[],
-): boolean {
-  const { zeros, poles } = loopFactors(plant, controller);
+export function stableByCount(loop: ScaledLoop, crossings: readonly { w: number; phase: number }[]): boolean {
+  const { zeros, poles } = loop.factors;
   let aboveOne = loop.originOrder > 0 || (loop.originOrder === 0 && loop.lnLowGain > 0);
   let turn = 0;
   let from = 0;

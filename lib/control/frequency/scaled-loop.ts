@@ -1,5 +1,5 @@
 import type { Plant, IdealController } from '../types';
-import { openLoop } from '../loop';
+import { openLoop, plantTransfer, type TransferFunction } from '../loop';
 import { isZero } from '../polynomial';
 import type { ComplexNumber } from '../roots';
 import { loopFactors, plantFactors, type Factors } from './loop-factors';
@@ -8,8 +8,9 @@ import { loopFactors, plantFactors, type Factors } from './loop-factors';
 export const CELL_WIDTH = 0.25;
 /** Half a cell, seen from its far end, as a fraction of that end's distance to the nearest pole or zero. */
 const HALF_CELL = CELL_WIDTH / (2 * (1 - CELL_WIDTH));
-const RANGE_LN = 1 / (1 - HALF_CELL) ** 2;
-const RANGE_PHASE = 2 / (1 - HALF_CELL) ** 4;
+/** Largest growth of 1/distance³ and 1/distance⁴ over half a cell, times half a cell. */
+const LN_DRIFT = (2 * HALF_CELL) / (1 - HALF_CELL) ** 3;
+const PHASE_DRIFT = (6 * HALF_CELL) / (1 - HALF_CELL) ** 4;
 /** Poles and zeros nearer than this, relative to their size, do not shape the curve between them. */
 const CANCELLED = 1e-12;
 
@@ -51,7 +52,11 @@ export class ScaledLoop {
   private ratioRe = 0;
   private ratioIm = 0;
 
-  constructor(num: readonly number[], den: readonly number[], deadTimeS: number, factors: Factors) {
+  /** @param factors all zeros and poles of num/den */
+  constructor(
+    { num, den, deadTimeS }: TransferFunction,
+    readonly factors: Factors,
+  ) {
     const kept = withoutCancellations(factors);
     const poleOrder = trailingZeros(den);
     const zeroOrder = trailingZeros(num);
@@ -67,9 +72,14 @@ export class ScaledLoop {
     const low = this.num[this.num.length - 1] / this.den[this.den.length - 1];
     this.lowSign = this.gainSign * Math.sign(low);
     this.lnLowGain = this.lnGain + Math.log(Math.abs(low));
-    this.rootRe = Float64Array.from(kept, ({ root }) => root.re / this.unitRadS);
-    this.rootIm = Float64Array.from(kept, ({ root }) => root.im / this.unitRadS);
-    this.rootWeight = Float64Array.from(kept, ({ weight }) => weight);
+    this.rootRe = new Float64Array(kept.length);
+    this.rootIm = new Float64Array(kept.length);
+    this.rootWeight = new Float64Array(kept.length);
+    kept.forEach(({ root, weight }, i) => {
+      this.rootRe[i] = root.re / this.unitRadS;
+      this.rootIm[i] = root.im / this.unitRadS;
+      this.rootWeight[i] = weight;
+    });
   }
 
   /** Computes lnMagnitude, phase, lnSlope and phaseSlope at w ≥ 0; at 0 those of L·s^originOrder. */
@@ -96,23 +106,31 @@ export class ScaledLoop {
     this.phaseSlope = slopeRe - this.ratioRe;
   }
 
-  /** Computes distance, lnBend and phaseBend at w. */
+  /**
+   * Computes distance, lnBend and phaseBend at w. Each root at distance d bends ln|L| by (re² - dw²)/d⁴ and the phase
+   * by 2·re·dw/d⁴, and these change by at most 2/d³ and 6·|re|/d⁴ per unit of w.
+   */
   bend(w: number): void {
     let nearest2 = Infinity;
     let lnBend = 0;
+    let lnDrift = 0;
     let phaseBend = 0;
+    let phaseDrift = 0;
     for (let i = 0; i < this.rootRe.length; i += 1) {
-      const re = Math.abs(this.rootRe[i]);
-      const dw = Math.abs(w - this.rootIm[i]);
+      const re = this.rootRe[i];
+      const dw = w - this.rootIm[i];
+      const weight = this.rootWeight[i];
       const d2 = re * re + dw * dw;
       const inverse = 1 / d2;
       if (d2 < nearest2) nearest2 = d2;
-      lnBend += inverse;
-      phaseBend += re * (dw + HALF_CELL * (dw + re)) * inverse * inverse;
+      lnBend += weight * (re - dw) * (re + dw) * inverse * inverse;
+      lnDrift += inverse;
+      phaseBend += weight * re * dw * inverse * inverse;
+      phaseDrift += Math.abs(re) * inverse * Math.sqrt(inverse);
     }
     this.distance = Math.sqrt(nearest2);
-    this.lnBend = RANGE_LN * lnBend;
-    this.phaseBend = RANGE_PHASE * phaseBend;
+    this.lnBend = Math.abs(lnBend) + LN_DRIFT * lnDrift;
+    this.phaseBend = 2 * Math.abs(phaseBend) + PHASE_DRIFT * phaseDrift;
   }
 
   /**
@@ -150,13 +168,9 @@ export class ScaledLoop {
  * @throws RangeError for a plant or controller outside its range
  */
 export function scaledLoop(plant: Plant, controller: IdealController | null): ScaledLoop | null {
-  const alone = controller === null;
-  const { num, den, deadTimeS } = openLoop(
-    plant,
-    controller ?? { kp: 1, ti: Infinity, td: 0, n: 1, b: 1, c: 0 },
-  );
-  if (isZero(num)) return null;
-  return new ScaledLoop(num, den, deadTimeS, alone ? plantFactors(plant) : loopFactors(plant, controller));
+  const transfer = controller === null ? plantTransfer(plant) : openLoop(plant, controller);
+  if (isZero(transfer.num)) return null;
+  return new ScaledLoop(transfer, controller === null ? plantFactors(plant) : loopFactors(plant, controller));
 }
 
 interface WeightedRoot {
@@ -165,18 +179,18 @@ interface WeightedRoot {
 }
 
 function withoutCancellations({ zeros, poles }: Factors): WeightedRoot[] {
-  const away = (root: ComplexNumber) => root.re !== 0 || root.im !== 0;
-  const openPoles = poles.filter(away);
-  const openZeros = zeros.filter(away).filter((zero) => {
+  const kept: WeightedRoot[] = [];
+  for (const root of poles) if (root.re !== 0 || root.im !== 0) kept.push({ root, weight: -1 });
+  for (const zero of zeros) {
+    if (zero.re === 0 && zero.im === 0) continue;
     const reach = CANCELLED * (Math.abs(zero.re) + Math.abs(zero.im));
-    const twin = openPoles.findIndex((p) => Math.abs(p.re - zero.re) + Math.abs(p.im - zero.im) <= reach);
-    if (twin >= 0) openPoles.splice(twin, 1);
-    return twin < 0;
-  });
-  return [
-    ...openZeros.map((root) => ({ root, weight: 1 as const })),
-    ...openPoles.map((root) => ({ root, weight: -1 as const })),
-  ];
+    const twin = kept.findIndex(
+      ({ root, weight }) => weight < 0 && Math.abs(root.re - zero.re) + Math.abs(root.im - zero.im) <= reach,
+    );
+    if (twin >= 0) kept.splice(twin, 1);
+    else kept.push({ root: zero, weight: 1 });
+  }
+  return kept;
 }
 
 function timeUnit(
@@ -201,5 +215,11 @@ function trailingZeros(p: readonly number[]): number {
 }
 
 function scaledMonic(p: readonly number[], originOrder: number, unit: number): Float64Array {
-  return Float64Array.from({ length: p.length - originOrder }, (_, i) => (p[i] / p[0]) * Math.pow(unit, -i));
+  const monic = new Float64Array(p.length - originOrder);
+  let power = p[0];
+  for (let i = 0; i < monic.length; i += 1) {
+    monic[i] = p[i] / power;
+    power *= unit;
+  }
+  return monic;
 }

@@ -38,11 +38,19 @@ export function limitGains({ loop, nodes }: LoopCurve, lnLevel = 0): LimitGains 
     }
   }
 
+  /** Can a crossover between neighbours be nearer to the level than those known? */
+  function canImprove(a: CurveNode, b: CurveNode): boolean {
+    const reach = slack(a, b, 'ln');
+    const tooLarge = above !== null && -Math.max(a.ln, b.ln) - reach > above.lnFactor;
+    const tooSmall = below !== null && -Math.min(a.ln, b.ln) + reach < below.lnFactor;
+    return !tooLarge && !tooSmall;
+  }
+
   function search(a: CurveNode, b: CurveNode, depth: number): void {
     const reach = slack(a, b, 'phase');
     const lowest = Math.min(a.phase, b.phase) - reach;
     const highest = Math.max(a.phase, b.phase) + reach;
-    if (targetsUpTo(highest) === targetsUpTo(lowest)) return;
+    if (targetsUpTo(highest) === targetsUpTo(lowest) || !canImprove(a, b)) return;
     const first = targetsUpTo(Math.min(a.phase, b.phase)) + 1;
     const last = targetsUpTo(Math.max(a.phase, b.phase));
     const touches = highest - lowest < TOUCHING;

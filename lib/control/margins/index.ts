@@ -1,7 +1,9 @@
 import { unitGainCrossings } from '../frequency/crossings';
 import { loopCurve } from '../frequency/curve';
-import { scaledLoop } from '../frequency/scaled-loop';
+import { loopFactors } from '../frequency/loop-factors';
+import { ScaledLoop } from '../frequency/scaled-loop';
 import { openLoop } from '../loop';
+import { isZero } from '../polynomial';
 import { stableByCount, stableByPolynomial } from '../stability';
 import type { IdealController, Margins, Plant } from '../types';
 import { limitGains } from './gain-margin';
@@ -30,12 +32,13 @@ export interface LoopAnalysis {
  * @throws RangeError for a plant or controller outside its range
  */
 export function analyseLoop(plant: Plant, controller: IdealController): LoopAnalysis {
-  const loop = scaledLoop(plant, controller);
-  const decided = stableByPolynomial(openLoop(plant, controller));
-  if (loop === null) return { stable: decided === true, margins: marginsOfZero(decided === true) };
+  const transfer = openLoop(plant, controller);
+  const decided = stableByPolynomial(transfer);
+  if (isZero(transfer.num)) return { stable: decided === true, margins: marginsOfZero(decided === true) };
+  const loop = new ScaledLoop(transfer, loopFactors(plant, controller));
   const curve = loopCurve(loop);
   const crossings = unitGainCrossings(curve);
-  const stable = decided ?? stableByCount(plant, controller, curve, crossings);
+  const stable = decided ?? stableByCount(loop, crossings);
   const limits = limitGains(curve);
   const radS = (w: number | undefined) => (w === undefined ? null : w * loop.unitRadS);
   const gains = {

@@ -15,6 +15,10 @@ export interface Peak {
 /** Stretches of the curve this short (rad, and as much in ln|L|) have at most one peak inside. */
 const SHORT = 0.25;
 const DEEPEST_SPLIT = 60;
+/** Below |L| = 1/50 the curve is next to the origin, and its size need not be resolved. */
+const LN_NEGLIGIBLE = -4;
+/** The search leaves out what is this little, relative, above the best known: rounding, not a higher peak. */
+const MARGIN = 1e-9;
 /** Peaks that differ by less, relative, are equal: the lowest frequency is named, limits first. */
 const SAME = 1e-11;
 
@@ -28,20 +32,28 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
   const sign = which === 'S' ? 1 : -1;
   const ends = endPeak(loop, sign);
   let best: Peak | null = null;
-  let known = ends.value;
-  for (const limit of [limits.above, limits.below]) {
-    if (limit !== null) known = Math.max(known, 1 / Math.abs(Math.expm1(-sign * limit.lnFactor)));
+  let known = 0;
+  // Where ln|L| (or -ln|L| for T) is outside this band, |L| alone keeps the value below the best known.
+  let bandLow = -Infinity;
+  let bandHigh = Infinity;
+
+  function raise(value: number): void {
+    if (value * (1 - MARGIN) <= known) return;
+    known = value * (1 - MARGIN);
+    bandLow = known > 1 ? Math.log1p(-1 / known) : -Infinity;
+    bandHigh = Math.log1p(1 / known);
   }
-  for (const node of nodes) known = Math.max(known, sensitivity(sign * node.ln, node.phase));
-  known *= 1 - 1e-9;
 
   function search(a: CurveNode, b: CurveNode, depth: number): void {
     const lnReach = slack(a, b, 'ln');
+    const lnLow = Math.min(sign * a.ln, sign * b.ln) - lnReach;
+    const lnHigh = Math.max(sign * a.ln, sign * b.ln) + lnReach;
+    if (lnHigh < bandLow || lnLow > bandHigh) return;
     const phaseReach = slack(a, b, 'phase');
-    if (highestInBox(a, b, sign, lnReach, phaseReach) <= known) return;
-    const short =
-      Math.abs(a.phase - b.phase) + phaseReach < SHORT &&
-      (Math.abs(a.ln - b.ln) + lnReach < SHORT || Math.max(sign * a.ln, sign * b.ln) < -4);
+    const phaseLow = Math.min(a.phase, b.phase) - phaseReach;
+    const phaseHigh = Math.max(a.phase, b.phase) + phaseReach;
+    if (highestInBox(lnLow, lnHigh, phaseLow, phaseHigh) <= known) return;
+    const short = phaseHigh - phaseLow < SHORT && (lnHigh - lnLow < SHORT || lnHigh < LN_NEGLIGIBLE);
     if (!short && depth < DEEPEST_SPLIT) {
       const between = middle(loop, a, b);
       search(a, between, depth + 1);
@@ -51,10 +63,15 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
     const from = a.w === 0 ? nudged(loop, a, b) : a;
     if (!(growth(sign, from) > 0 && growth(sign, b) <= 0)) return;
     const peak = climb(loop, from, b, sign);
-    known = Math.max(known, peak.value * (1 - 1e-9));
+    raise(peak.value);
     if (best === null || peak.value > best.value * (1 + SAME)) best = peak;
   }
 
+  raise(ends.value);
+  for (const limit of [limits.above, limits.below])
+    if (limit !== null) raise(1 / Math.abs(Math.expm1(-sign * limit.lnFactor)));
+  for (const node of nodes)
+    if (sign * node.ln > bandLow && sign * node.ln < bandHigh) raise(sensitivity(sign * node.ln, node.phase));
   for (let i = 1; i < nodes.length; i += 1)
     if (!isSingular(nodes[i - 1], nodes[i])) search(nodes[i - 1], nodes[i], 0);
   const inside = best as Peak | null;
@@ -64,17 +81,14 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
   return inside.value > ends.value * (reached ? 1 - SAME : 1 + SAME) ? inside : ends;
 }
 
-/** Upper bound of 1/|1 + L| over the box around the stretch; sign = -1 takes 1/L for L. */
-function highestInBox(a: CurveNode, b: CurveNode, sign: number, lnReach: number, phaseReach: number): number {
-  const lowest = Math.min(a.phase, b.phase) - phaseReach;
-  const highest = Math.max(a.phase, b.phase) + phaseReach;
-  const passesMinusOne =
-    Math.floor((highest - Math.PI) / (2 * Math.PI)) > Math.floor((lowest - Math.PI) / (2 * Math.PI));
-  const towards = passesMinusOne ? 1 : Math.max(-Math.cos(lowest), -Math.cos(highest));
-  const smallest = Math.exp(Math.min(sign * a.ln, sign * b.ln) - lnReach);
-  const largest = Math.exp(Math.max(sign * a.ln, sign * b.ln) + lnReach);
+/** Upper bound of 1/|1 + L| for ln|L| and phase within the given ranges. */
+function highestInBox(lnLow: number, lnHigh: number, phaseLow: number, phaseHigh: number): number {
+  const turn = 2 * Math.PI;
+  const passesMinusOne = Math.floor((phaseHigh - Math.PI) / turn) > Math.floor((phaseLow - Math.PI) / turn);
+  const towards = passesMinusOne ? 1 : Math.max(-Math.cos(phaseLow), -Math.cos(phaseHigh));
+  const smallest = Math.exp(lnLow);
   if (smallest === Infinity) return 0;
-  const size = Math.min(Math.max(towards, smallest), largest);
+  const size = Math.min(Math.max(towards, smallest), Math.exp(lnHigh));
   return 1 / Math.sqrt((size - 1) ** 2 + 2 * size * (1 - towards));
 }
 

@@ -191,6 +191,58 @@ describe('limits and sampling', () => {
     expect(released).toBeLessThan(low + 0.01);
   });
 
+  it('a rate limit: up along the ramp, down along it while v falls faster, then free', () => {
+    // 1/s, kp = 1, slew 0.5. Up: u = t/2, y = t²/4, until u = 1 − y at t1 = √5 − 1 with u1 = t1/2. There v' = −u1 < −0.5:
+    // down: v − u = −(u1 − 0.5)s + s²/4 until s2 = 4(u1 − 0.5); from then on u' = −u.
+    const t1 = Math.sqrt(5) - 1;
+    const u1 = t1 / 2;
+    const s2 = 4 * (u1 - 0.5);
+    const want = (s: number) => {
+      if (s < t1) return s / 2;
+      if (s < t1 + s2) return u1 - (s - t1) / 2;
+      return (u1 - s2 / 2) * Math.exp(-(s - t1 - s2));
+    };
+    const { t, u } = respond(plant([1], [1, 0]), idealController({ kp: 1 }), 'setpoint', {
+      horizonS: 6,
+      actuator: { slew: 0.5 },
+    });
+    expectCurve(t, u, want);
+  });
+
+  it('value and rate limits together with dead time follow a fine Euler integration of the same definition', () => {
+    const [kp, ti, low, high, slew, tt, theta] = [3, 4, -0.5, 1.2, 0.4, 2, 1];
+    const h = 2e-4;
+    const steps = Math.round(20 / h);
+    const back = Math.round(theta / h);
+    const [us, ys] = [new Float64Array(steps + 1), new Float64Array(steps + 1)];
+    let [y, integral, u] = [0, 0, 0];
+    for (let i = 0; i <= steps; i += 1) {
+      const v = kp * (1 - y) + integral;
+      const wanted = Math.min(Math.max(v, low), high);
+      if (i > 0) u = Math.min(Math.max(wanted, u - slew * h), u + slew * h);
+      [us[i], ys[i]] = [u, y];
+      integral += h * ((kp / ti) * (1 - y) + (u - v) / tt);
+      y += (h * ((i >= back ? us[i - back] : 0) * 2 - y)) / 10;
+    }
+    const result = respond(plant([2], [10, 1], theta), idealController({ kp, ti }), 'setpoint', {
+      horizonS: 20,
+      actuator: { low, high, slew, trackingTimeS: tt },
+    });
+    expectCurve(result.t, result.y, (s) => ys[Math.round(s / h)], 5e-4);
+    expectCurve(result.t, result.u, (s) => us[Math.round(s / h)], 1e-3);
+  });
+
+  it('a sampled controller moves by at most slew times its sample time', () => {
+    const result = respond(plant([1], [1, 0]), idealController({ kp: 1 }), 'setpoint', {
+      horizonS: 2,
+      sampleTimeS: 0.5,
+      actuator: { slew: 0.5 },
+    });
+    // u0 = 0.25 from 0, y(0.5) = 0.125; u1 = min(0.875, 0.5) = 0.5, y(1) = 0.375; u2 = min(0.625, 0.75) = 0.625,
+    // y(1.5) = 0.6875; u3 = max(0.3125, 0.375) = 0.375.
+    expectCurve(result.t, result.u, (s) => [0.25, 0.5, 0.625, 0.375][Math.floor(s / 0.5)], 1e-9);
+  });
+
   it('a sampled P on an integrator: the recursion of its samples, straight lines between them', () => {
     const h = 0.3;
     const { t, y, u } = respond(plant([1], [1, 0]), idealController({ kp: 2 }), 'setpoint', {

@@ -34,13 +34,26 @@ export class DelayedInput {
 
   at(x: number): number {
     if (this.silent) return 0;
-    const { solution } = this;
     const past = x - this.delay;
+    const piece = this.pieceAt(past);
+    return this.solution.output.value(piece, this.solution.place(piece, past)) + this.load;
+  }
+
+  rateAt(x: number): number {
+    if (this.silent || this.delay === 0) return 0;
+    const { from, to, output } = this.solution;
+    const past = x - this.delay;
+    const piece = this.pieceAt(past);
+    return (output.slope(piece, this.solution.place(piece, past)) * 2) / (to[piece] - from[piece]);
+  }
+
+  private pieceAt(past: number): number {
+    const { from, to, count } = this.solution;
     let piece = this.current;
-    const last = Math.min(this.last, solution.count - 1);
-    while (piece < last && past > solution.to[piece]) piece += 1;
-    while (piece > this.first && past < solution.from[piece]) piece -= 1;
+    const last = Math.min(this.last, count - 1);
+    while (piece < last && past > to[piece]) piece += 1;
+    while (piece > this.first && past < from[piece]) piece -= 1;
     this.current = piece;
-    return solution.output.value(piece, solution.place(piece, past)) + this.load;
+    return piece;
   }
 }

@@ -1,7 +1,7 @@
 import { ok, refuse, type Result } from '../../result';
 import { Breaks } from './breaks';
 import { DelayedInput } from './history';
-import { modeChange, settleMode } from './limit-events';
+import { Limits } from './limits';
 import type { LoopEquations } from './loop-equations';
 import type { Solution } from './pieces';
 import { Stepper } from './stepper';
@@ -27,24 +27,24 @@ export function integrateContinuous(
   equations: LoopEquations,
   settings: IntegrationSettings,
 ): Result<Solution, IntegrationRefusal> {
-  const { end, delay, tolerance } = settings;
+  const { end, delay, smoothing, tolerance } = settings;
   const stepper = new Stepper(equations, { ...settings, longestStep: delay });
   const history = new DelayedInput(stepper.solution, delay, equations.excitation.load);
-  const breaks = new Breaks(delay, settings.smoothing, end);
+  const breaks = new Breaks(delay, smoothing, end);
+  const limits = equations.limited ? new Limits(equations, stepper, history, tolerance) : null;
   const inputAt = (x: number): number => history.at(x);
   const output = (): number => equations.output;
-
-  const stopWithin = (from: number, to: number, resolveAt: (x: number) => void): number => {
-    const change = modeChange(equations, from, to, tolerance, resolveAt);
+  const stopWithin = (from: number, to: number, resolveAt: (x: number) => ArrayLike<number>): number => {
+    const change = limits?.changeWithin(from, to, resolveAt) ?? null;
     if (change !== null) breaks.arise(change, 1);
     return change ?? to;
   };
+
   breaks.arise(0, 0);
   while (stepper.x < end) {
     history.restrict(stepper.x, breaks.next());
-    if (equations.limited)
-      settleMode(equations, tolerance, () => equations.resolve(stepper.state, inputAt(stepper.x)));
-    stepper.advance({ end: breaks.next(), inputAt, output, ...(equations.limited ? { stopWithin } : {}) });
+    limits?.settle();
+    stepper.advance({ end: breaks.next(), inputAt, output, ...(limits ? { stopWithin } : {}) });
     breaks.pass(stepper.x);
     const refusal = refusalOf(stepper, settings.budget);
     if (refusal) return refusal;

@@ -1,53 +1,53 @@
 import type { LimitMode, LoopEquations } from './loop-equations';
 import { NODE_FRACTIONS } from './pieces';
 
-/** Which mode the present v asks for; a held output is let go only `margin` inside its limit, so that nothing chatters. */
-export function wantedMode(equations: LoopEquations, margin: number): LimitMode {
-  const { v, mode, excitation } = equations;
-  const { low, high } = excitation;
-  const highMargin = margin * (1 + Math.abs(high));
-  const lowMargin = margin * (1 + Math.abs(low));
-  if (v > (mode === 'high' ? high - highMargin : high + highMargin)) return 'high';
-  if (v < (mode === 'low' ? low + lowMargin : low - lowMargin)) return 'low';
-  return 'free';
-}
-
-/** Puts the equations into the mode that holds now: at the start, after a jump, after a change. */
-export function settleMode(equations: LoopEquations, margin: number, resolve: () => void): void {
-  for (let attempt = 0; attempt < 3; attempt += 1) {
-    resolve();
-    const wanted = wantedMode(equations, margin);
-    if (wanted === equations.mode) return;
-    equations.mode = wanted;
+/**
+ * Which mode the loop asks for after `resolve`. Every mode is left only `margin` beyond its border, so that nothing
+ * chatters.
+ *
+ * @param rate dv/dx, asked for only while the output is free and its rate limited
+ */
+export function wantedMode(equations: LoopEquations, margin: number, rate: () => number): LimitMode {
+  const { v, output, mode, excitation } = equations;
+  const { low, high, slew } = excitation;
+  const beyond = (limit: number) => margin * (1 + Math.abs(limit));
+  switch (mode) {
+    case 'high':
+      return v < high - beyond(high) ? 'free' : 'high';
+    case 'low':
+      return v > low + beyond(low) ? 'free' : 'low';
+    case 'rising':
+      if (output > high + beyond(high)) return 'high';
+      return output > v + beyond(v) ? 'free' : 'rising';
+    case 'falling':
+      if (output < low - beyond(low)) return 'low';
+      return output < v - beyond(v) ? 'free' : 'falling';
+    case 'free': {
+      if (v > high + beyond(high)) return 'high';
+      if (v < low - beyond(low)) return 'low';
+      if (equations.ramp < 0) return 'free';
+      const rateNow = rate();
+      if (Math.abs(rateNow) <= slew * (1 + 1e-6)) return 'free';
+      return rateNow > 0 ? 'rising' : 'falling';
+    }
   }
 }
 
 /**
- * The first moment in (from, to] at which the loop has to change between free and held, found by halving on the step's
- * interpolation; null when it stays as it is. `resolveAt` solves the loop's equations at a time within the step.
+ * The first moment in (from, to] at which `stays` no longer holds, found by halving on the step's interpolation; null
+ * when it holds throughout.
  */
-export function modeChange(
-  equations: LoopEquations,
-  from: number,
-  to: number,
-  margin: number,
-  resolveAt: (x: number) => void,
-): number | null {
-  const stays = (x: number): boolean => {
-    resolveAt(x);
-    return wantedMode(equations, margin) === equations.mode;
-  };
+export function firstChange(from: number, to: number, stays: (x: number) => boolean): number | null {
   let before = from;
   for (const fraction of NODE_FRACTIONS.slice(1)) {
     let after = fraction === 1 ? to : from + fraction * (to - from);
     if (!stays(after)) {
-      while (after - before > 1e-15 * to) {
+      for (;;) {
         const middle = (before + after) / 2;
-        if (middle <= before || middle >= after) break;
+        if (middle <= before || middle >= after || after - before <= 1e-15 * to) return after;
         if (stays(middle)) before = middle;
         else after = middle;
       }
-      return after;
     }
     before = after;
   }

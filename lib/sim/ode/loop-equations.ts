@@ -1,20 +1,26 @@
 import type { IdealController, MeasurementFilter } from '../../control/types';
 import type { PlantStates } from './plant-states';
 
-/** What drives the loop and what limits it, in units of the signal scale; outputs are in units of `gain`. */
+/** What drives the loop and what limits it, in units of the signal scale and of the dimensionless time. */
 export interface Excitation {
   readonly setpoint: number;
   readonly load: number;
   readonly low: number;
   readonly high: number;
+  /** Largest rate of change of the output. */
+  readonly slew: number;
 }
 
-/** Which of the limits holds the controller output; frozen while the solver runs, so that it sees smooth equations. */
-export type LimitMode = 'free' | 'low' | 'high';
+/**
+ * What holds the controller output: nothing, a limit, or the rate limit upwards or downwards. Frozen while the solver
+ * runs, so that it sees smooth equations.
+ */
+export type LimitMode = 'free' | 'low' | 'high' | 'rising' | 'falling';
 
 /**
  * The loop as first-order equations in the dimensionless time x = t/timeUnitS. State vector: the plant's states, the
- * integral term, the derivative's lag, the states of the measurement filter (those that exist).
+ * integral term, the derivative's lag, the states of the measurement filter, the output while its rate is limited
+ * (those that exist).
  *
  * The controller output v is divided by kp here (v = b·r − yf + integral + derivative), the plant is multiplied by it:
  * every signal is then of the size of y.
@@ -24,6 +30,8 @@ export class LoopEquations {
   /** Indices of the states that y and the controller output are made of. */
   readonly visible: number[];
   readonly limited: boolean;
+  /** Index of the output's own state, −1 without a rate limit. */
+  readonly ramp: number = -1;
   mode: LimitMode = 'free';
   /** Results of `resolve`: plant output, controller output before and after the limits. */
   y = 0;
@@ -59,12 +67,15 @@ export class LoopEquations {
       this.filter = next;
       next += filter.order;
     }
+    if (Number.isFinite(excitation.slew)) this.ramp = next++;
     // The solver wants at least one equation; a pure dead time with a P controller has none.
     this.dimension = Math.max(next, 1);
-    this.limited = excitation.low > -Infinity || excitation.high < Infinity;
+    this.limited = excitation.low > -Infinity || excitation.high < Infinity || this.ramp >= 0;
     // Index 0 is the plant's first state, or stands in where there is no state at all.
-    this.visible = [...new Set([0, this.integral, this.lag, this.filter].filter((i) => i >= 0))];
+    const visible = [...new Set([0, this.integral, this.lag, this.filter].filter((i) => i >= 0))];
     this.slopes = new Array<number>(this.dimension).fill(0);
+    // The rate of the output depends on every state.
+    this.visible = this.ramp >= 0 ? this.slopes.map((_, index) => index) : visible;
     this.slope = td > 0 ? 1 + n : 1;
     this.integralRate = timeUnitS / ti;
     this.lagRate = td > 0 ? (timeUnitS * n) / td : 0;
@@ -87,12 +98,12 @@ export class LoopEquations {
     } else if (this.filter < 0 && this.mode === 'free') {
       this.y = (fromStates + plant.direct * (offset + excitation.load)) / (1 + plant.direct * this.slope);
     } else {
-      this.plantInput = this.held(offset - this.slope * filtered) + excitation.load;
+      this.plantInput = this.held(state, offset - this.slope * filtered) + excitation.load;
       this.y = fromStates + plant.direct * this.plantInput;
     }
     this.measured = this.filter >= 0 ? filtered : this.y;
     this.v = offset - this.slope * this.measured;
-    this.output = this.held(this.v);
+    this.output = this.held(state, this.v);
     if (!this.hasDeadTime) this.plantInput = this.output + excitation.load;
   }
 
@@ -114,8 +125,29 @@ export class LoopEquations {
       slopes[this.lag] =
         this.lagRate * (controller.c * excitation.setpoint - this.measured - state[this.lag]);
     }
+    if (this.ramp >= 0) slopes[this.ramp] = this.rampRate();
     if (this.filter >= 0) this.filterSlopes(state, controller.filter as MeasurementFilter);
     return slopes;
+  }
+
+  /**
+   * dv/dx while nothing holds the output. `delayedRate` is the rate of what reaches the plant after the dead time; it
+   * matters for a biproper plant only.
+   */
+  outputRate(state: ArrayLike<number>, delayedInput: number, delayedRate: number): number {
+    const slopes = this.derivative(state, delayedInput);
+    const { plant } = this;
+    const integral = this.integral >= 0 ? slopes[this.integral] : 0;
+    const lag = this.lag >= 0 ? this.controller.n * slopes[this.lag] : 0;
+    if (this.filter >= 0) return integral - lag - this.slope * slopes[this.filter];
+    const fromStates = plant.order > 0 ? slopes[0] : 0;
+    if (this.hasDeadTime) return integral - lag - this.slope * (fromStates + plant.direct * delayedRate);
+    return (integral - lag - this.slope * fromStates) / (1 + plant.direct * this.slope);
+  }
+
+  private rampRate(): number {
+    if (this.mode === 'rising') return this.excitation.slew;
+    return this.mode === 'falling' ? -this.excitation.slew : 0;
   }
 
   private filterSlopes(state: ArrayLike<number>, filter: MeasurementFilter): void {
@@ -139,8 +171,16 @@ export class LoopEquations {
     return offset;
   }
 
-  private held(v: number): number {
-    if (this.mode === 'free') return v;
-    return this.mode === 'low' ? this.excitation.low : this.excitation.high;
+  private held(state: ArrayLike<number>, v: number): number {
+    switch (this.mode) {
+      case 'free':
+        return v;
+      case 'low':
+        return this.excitation.low;
+      case 'high':
+        return this.excitation.high;
+      default:
+        return state[this.ramp];
+    }
   }
 }

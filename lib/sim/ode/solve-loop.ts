@@ -81,6 +81,7 @@ function solveInUnits(
     load: step === 'load' ? 1 / uUnit : 0,
     low: limits[0],
     high: limits[1],
+    slew: ((actuator.slew ?? Infinity) * timeUnitS) / Math.abs(uUnit),
   };
   const trackingTimeS = actuator.trackingTimeS ?? (td > 0 && Number.isFinite(ti) ? Math.sqrt(ti * td) : ti);
   const states = plantStates(plant, kp, timeUnitS);
@@ -89,9 +90,9 @@ function solveInUnits(
   const scales = { timeUnitS, yUnit, uUnit };
   if (sampleTimeS !== undefined) {
     const plantAlone = { ...controller, ti: Infinity, td: 0 };
-    const unlimited = { ...excitation, low: -Infinity, high: Infinity };
+    const unlimited = { ...excitation, low: -Infinity, high: Infinity, slew: Infinity };
     const equations = new LoopEquations(states, plantAlone, unlimited, true, timeUnitS, trackingTimeS);
-    const law = new SampledLaw(controller, excitation, sampleTimeS, trackingTimeS);
+    const law = new SampledLaw(controller, excitation, { sampleTimeS, timeUnitS, trackingTimeS });
     const solved = integrateSampled(equations, law, { ...common, sampleTime: sampleTimeS / timeUnitS });
     return solved.ok ? ok({ solution: solved.value, ...scales }) : solved;
   }

@@ -19,7 +19,7 @@ export interface Run {
   readonly inputAt: (x: number) => number;
   readonly output: () => number;
   /** The moment within a step at which the equations change, or its end; `resolveAt` solves the loop within the step. */
-  readonly stopWithin?: (from: number, to: number, resolveAt: (x: number) => void) => number;
+  readonly stopWithin?: (from: number, to: number, resolveAt: (x: number) => ArrayLike<number>) => number;
 }
 
 /** A response above this times the signal scale has left every useful range; an unstable loop gets there. */
@@ -86,9 +86,10 @@ export class Stepper {
 
   private keepStep(run: Run, from: number, to: number, state: number[], dense: DenseOutput): boolean {
     const { equations, solution } = this;
-    const resolveAt = (x: number): void => {
+    const resolveAt = (x: number): number[] => {
       for (const index of equations.visible) this.nodeState[index] = dense(index, x);
       equations.resolve(this.nodeState, run.inputAt(x));
+      return this.nodeState;
     };
     const reached = run.stopWithin ? run.stopWithin(from, to, resolveAt) : to;
     const reachedState = reached < to ? state.map((_, index) => dense(index, reached)) : state;

@@ -8,7 +8,9 @@ const folder = fileURLToPath(new URL('./migrations', import.meta.url));
 const LOCK = 715_230_611;
 
 async function newestKnown(): Promise<number> {
-  const journal = JSON.parse(await readFile(`${folder}/meta/_journal.json`, 'utf8')) as { entries: { when: number }[] };
+  const journal = JSON.parse(await readFile(`${folder}/meta/_journal.json`, 'utf8')) as {
+    entries: { when: number }[];
+  };
   return Math.max(0, ...journal.entries.map(({ when }) => when));
 }
 
@@ -35,9 +37,12 @@ export async function migrateDatabase(url: string): Promise<void> {
   try {
     await client.query('select pg_advisory_lock($1)', [LOCK]);
     if ((await newestApplied(client)) > (await newestKnown()))
-      throw Object.assign(new Error('The database was written by a newer version of Fettle; update the code first.'), {
-        code: 'NEWER_SCHEMA',
-      });
+      throw Object.assign(
+        new Error('The database was written by a newer version of Fettle; update the code first.'),
+        {
+          code: 'NEWER_SCHEMA',
+        },
+      );
     await migrate(drizzle(client), { migrationsFolder: folder });
   } finally {
     await client.end();

@@ -8,7 +8,9 @@ import { database, type Transaction } from './client';
  */
 export function withScope<T>(scope: Scope, work: (tx: Transaction) => Promise<T>): Promise<T> {
   return database().transaction(async (tx) => {
-    await tx.execute(sql`select set_config('role', 'fettle_app', true), set_config('app.org_id', ${scope.orgId}, true)`);
+    await tx.execute(
+      sql`select set_config('role', 'fettle_app', true), set_config('app.org_id', ${scope.orgId}, true)`,
+    );
     return work(tx);
   });
 }

@@ -41,7 +41,10 @@ export const changes = pgTable(
     index('changes_axis').on(table.orgId, table.axisId),
     foreignKey({ columns: [table.orgId, table.axisId], foreignColumns: [axes.orgId, axes.id] }),
     foreignKey({ columns: [table.orgId, table.toGainSetId], foreignColumns: [gainSets.orgId, gainSets.id] }),
-    foreignKey({ columns: [table.orgId, table.fromGainSetId], foreignColumns: [gainSets.orgId, gainSets.id] }),
+    foreignKey({
+      columns: [table.orgId, table.fromGainSetId],
+      foreignColumns: [gainSets.orgId, gainSets.id],
+    }),
   ],
 );
 

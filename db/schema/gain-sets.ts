@@ -1,4 +1,13 @@
-import { doublePrecision, foreignKey, integer, pgTable, primaryKey, text, unique, uuid } from 'drizzle-orm/pg-core';
+import {
+  doublePrecision,
+  foreignKey,
+  integer,
+  pgTable,
+  primaryKey,
+  text,
+  unique,
+  uuid,
+} from 'drizzle-orm/pg-core';
 import type { Convention, DeviceRow } from '../../lib/control/forms';
 import type { Actuator, IdealController, Margins } from '../../lib/control/types';
 import type { Requirement, Verdict } from '../../lib/requirement';

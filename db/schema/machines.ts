@@ -1,4 +1,13 @@
-import { doublePrecision, foreignKey, integer, pgTable, primaryKey, text, unique, uuid } from 'drizzle-orm/pg-core';
+import {
+  doublePrecision,
+  foreignKey,
+  integer,
+  pgTable,
+  primaryKey,
+  text,
+  unique,
+  uuid,
+} from 'drizzle-orm/pg-core';
 import type { Convention } from '../../lib/control/forms';
 import type { MeasurementFilter, Plant } from '../../lib/control/types';
 import type { Requirement } from '../../lib/requirement';

@@ -29,7 +29,10 @@ export const memberships = pgTable(
       .references(() => persons.id),
     roles: text('roles').array().notNull().$type<Role[]>(),
   },
-  (table) => [primaryKey({ columns: [table.orgId, table.personId] }), index('memberships_person').on(table.personId)],
+  (table) => [
+    primaryKey({ columns: [table.orgId, table.personId] }),
+    index('memberships_person').on(table.personId),
+  ],
 );
 
 export const sessions = pgTable(

@@ -1,4 +1,5 @@
 import type { Role } from '../change';
+import { FettleError } from '../errors';
 
 export interface Actor {
   readonly kind: 'person' | 'token' | 'system';
@@ -21,4 +22,11 @@ export interface Scope {
 /** For the session gate, the token check and the seed; a raw id from outside never becomes a scope. */
 export function mintScope(orgId: string, actor: Actor): Scope {
   return { orgId, actor } as Scope;
+}
+
+/** The person who acts, for what only a person can do: sign, keep, enter. */
+export function personOf(scope: Scope): { readonly id: string; readonly name: string } {
+  const { id, name } = scope.actor;
+  if (id === null) throw new FettleError('FORBIDDEN', 'Only a person can do this.');
+  return { id, name };
 }

@@ -13,9 +13,11 @@ const ruleIds = RULES.map(({ id }) => id) as [RuleId, ...RuleId[]];
 export const tuneRequest = z
   .object({
     plant: plantShape.optional(),
-    ultimate: z.object({ ku: z.number(), tu: positive }).optional(),
+    ultimate: z
+      .object({ ku: z.number().refine((ku) => ku !== 0, 'The ultimate gain is not 0.'), tu: positive })
+      .optional(),
     rule: z.enum(ruleIds),
-    type: z.enum(['P', 'PI', 'PD', 'PID']),
+    type: z.enum(['P', 'PI', 'PD', 'PID', 'I']),
     aggressiveness: z.number().min(0).max(1).optional(),
     lambda: positive.optional(),
     variant: z.string().max(60).optional(),

@@ -1,0 +1,62 @@
+import { z } from 'zod';
+
+const unit = z.string().trim().min(1, 'State the unit, as it stands on the display.').max(16);
+const number = z.number('Type a number.');
+const positive = number.positive('Must be above 0.');
+
+/** How the target controller wants its gains. More of lib/control/forms can be stated as data later. */
+export const conventionInput = z
+  .object({
+    form: z.enum(['ideal', 'parallel', 'series']),
+    gain: z.enum(['gain', 'proportional-band']),
+    integral: z.enum(['seconds', 'minutes', 'repeats-per-minute', 'gain', 'per-sample']),
+    derivative: z.enum(['seconds', 'minutes', 'gain', 'per-sample']),
+    inputSpan: positive.optional(),
+    outputSpan: positive.optional(),
+    decimals: z.int('A whole number of decimals.').min(0).max(9).optional(),
+  })
+  .refine(({ inputSpan, outputSpan }) => (inputSpan === undefined) === (outputSpan === undefined), {
+    message: 'State both spans or neither.',
+    path: ['inputSpan'],
+  })
+  .refine(({ gain, inputSpan }) => gain !== 'proportional-band' || inputSpan !== undefined, {
+    message: 'A proportional band in % needs both spans.',
+    path: ['inputSpan'],
+  });
+
+const axisFields = z.object({
+  tag: z.string().trim().min(1, 'Give the axis its tag.').max(40),
+  name: z.string().trim().min(1, 'Say what it moves or heats.').max(80),
+  measurementUnit: unit,
+  outputUnit: unit,
+  actuatorLow: number.optional(),
+  actuatorHigh: number.optional(),
+  actuatorSlew: positive.optional(),
+  sampleTimeS: positive.optional(),
+  deviceLabel: z.string().trim().max(80).default(''),
+  convention: conventionInput,
+});
+
+type AxisFields = z.output<typeof axisFields>;
+
+function perSampleNeedsTime({ convention, sampleTimeS }: AxisFields): boolean {
+  const perSample = convention.integral === 'per-sample' || convention.derivative === 'per-sample';
+  return !perSample || sampleTimeS !== undefined;
+}
+
+function limitsInOrder({ actuatorLow, actuatorHigh }: AxisFields): boolean {
+  return actuatorLow === undefined || actuatorHigh === undefined || actuatorLow < actuatorHigh;
+}
+
+const LIMITS = { message: 'The lower limit must be below the upper one.', path: ['actuatorLow'] };
+const PER_SAMPLE = { message: 'Gains per sample need the sample time.', path: ['sampleTimeS'] };
+
+export const axisInput = axisFields
+  .extend({ machineId: z.uuid() })
+  .refine(limitsInOrder, LIMITS)
+  .refine(perSampleNeedsTime, PER_SAMPLE);
+
+export const axisEdit = axisFields
+  .extend({ rowVersion: z.int().min(1) })
+  .refine(limitsInOrder, LIMITS)
+  .refine(perSampleNeedsTime, PER_SAMPLE);

@@ -1,0 +1,47 @@
+import { and, arrayContains, eq } from 'drizzle-orm';
+import { memberships } from '../../../db/schema';
+import type { Scope } from '../../auth/scope';
+import { FettleError } from '../../errors';
+import { issueInput } from '../../schemas/change';
+import { parseInput } from '../parse-input';
+import { requireBaseline } from './baseline';
+import { takeStep, type StepContext } from './take-step';
+
+async function requireTechnician({ tx }: StepContext, scope: Scope, technicianId: string): Promise<void> {
+  const rows = await tx
+    .select({ id: memberships.personId })
+    .from(memberships)
+    .where(
+      and(
+        eq(memberships.orgId, scope.orgId),
+        eq(memberships.personId, technicianId),
+        arrayContains(memberships.roles, ['technician']),
+      ),
+    );
+  if (rows.length > 0) return;
+  const message = 'That person is no technician of this organisation.';
+  throw new FettleError('INVALID', message, { fields: [{ path: 'technicianId', message }] });
+}
+
+function requireSiteReference({ change }: StepContext): void {
+  if (change.safetyFunction === 'no' || change.siteReference !== '') return;
+  throw new FettleError(
+    'INVALID',
+    'The loop is, or may be, part of a safety function: the site’s own procedure comes first. Enter its reference in the change before it is issued.',
+  );
+}
+
+/** Issues an approved change to one technician, or to any. */
+export async function issueChange(scope: Scope, id: string, input: unknown): Promise<void> {
+  const { technicianId } = parseInput(issueInput, input);
+  await takeStep(scope, id, {
+    action: 'issue',
+    set: { technicianId: technicianId ?? null },
+    payload: technicianId ? { technicianId } : {},
+    also: async (context) => {
+      requireSiteReference(context);
+      await requireBaseline(context);
+      if (technicianId) await requireTechnician(context, scope, technicianId);
+    },
+  });
+}

@@ -3,12 +3,21 @@ import { RateLimiterPostgres, RateLimiterRes } from 'rate-limiter-flexible';
 import { pool } from '../../db/client';
 import { withSystem } from '../../db/tx';
 import { memberships, persons, sessions } from '../../db/schema';
+import type { Role } from '../change';
 import { FettleError } from '../errors';
 import { passwordMatches } from './passwords';
 import { SESSION_HOURS } from './session';
 
 const WINDOW_S = 15 * 60;
 const SAME_ANSWER = 'E-mail or password is not right.';
+
+export interface SignedIn {
+  readonly sessionId: string;
+  readonly who: {
+    readonly person: { id: string; name: string; email: string };
+    readonly roles: readonly Role[];
+  };
+}
 
 interface Limits {
   account: RateLimiterPostgres;
@@ -53,10 +62,10 @@ async function consume(limit: RateLimiterPostgres, key: string): Promise<void> {
  * Opens a session for an account and its password. Every attempt counts against account and address until one is
  * right; an unknown account gets the same answer, as late, as a wrong password.
  *
- * @returns the id of the session
+ * @returns the id of the session, and who signed in
  * @throws FettleError UNAUTHENTICATED or TOO_MANY
  */
-export async function signIn(input: { email: string; password: string; address: string }): Promise<string> {
+export async function signIn(input: { email: string; password: string; address: string }): Promise<SignedIn> {
   const email = input.email.trim().toLowerCase();
   const { account, address } = signInLimits();
   await consume(address, input.address);
@@ -65,6 +74,8 @@ export async function signIn(input: { email: string; password: string; address: 
     tx
       .select({
         id: persons.id,
+        name: persons.name,
+        roles: memberships.roles,
         passwordHash: persons.passwordHash,
         deactivatedAt: persons.deactivatedAt,
         orgId: memberships.orgId,
@@ -86,5 +97,6 @@ export async function signIn(input: { email: string; password: string; address: 
       .values({ personId: known.id, orgId: known.orgId, expiresAt })
       .returning({ id: sessions.id }),
   );
-  return session.id;
+  const { id, name, roles } = known;
+  return { sessionId: session.id, who: { person: { id, name, email }, roles } };
 }

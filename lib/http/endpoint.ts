@@ -6,20 +6,21 @@ import { log } from '../log';
 import { once } from './idempotency';
 import { encodeNumbers } from './numbers';
 import { problemResponse, unknownProblem } from './problem';
-import { readJson } from './read-json';
+import { readBody, schemaError } from './read-json';
 
 export interface Call<Input> {
-  session: Session;
-  input: Input;
-  params: Record<string, string>;
-  request: Request;
+  readonly session: Session;
+  /** The body, read by the endpoint's schema; as it came when the endpoint has none (its service reads it). */
+  readonly input: Input;
+  readonly params: Record<string, string>;
+  readonly query: URLSearchParams;
 }
 
-interface Endpoint<Schema extends z.ZodType> {
-  schema?: Schema;
+interface Endpoint<Input> {
+  readonly schema?: z.ZodType<Input>;
   /** Status of a success; 200 when not given. */
-  status?: number;
-  run: (call: Call<z.output<Schema>>) => Promise<unknown>;
+  readonly status?: number;
+  readonly run: (call: Call<Input>) => Promise<unknown>;
 }
 
 type Handler = (request: Request, context: { params: Promise<Record<string, string>> }) => Promise<Response>;
@@ -48,24 +49,32 @@ export async function answering(work: () => Promise<Response>): Promise<Response
   } catch (error) {
     if (error instanceof FettleError) return problemResponse(error);
     const id = randomUUID();
-    log.error({ id, error }, 'unexpected error in an API route');
+    log.error({ id, err: error }, 'unexpected error in an API route');
     return unknownProblem(id);
   }
 }
 
 /** The one shape of a route: session, body by its schema, service, answer. */
-export function endpoint<Schema extends z.ZodType = z.ZodType<unknown>>(options: Endpoint<Schema>): Handler {
+export function endpoint<Input = unknown>(options: Endpoint<Input>): Handler {
   return (request, context) =>
     answering(async () => {
       refuseForeignOrigin(request);
       const session = await sessionOf(request);
       if (!session) throw new FettleError('UNAUTHENTICATED', 'Sign in, or send a bearer token.');
       const params = await context.params;
-      const input = (
-        options.schema ? await readJson(request, options.schema) : undefined
-      ) as z.output<Schema>;
-      const work = async () =>
-        jsonResponse(await options.run({ session, input, params, request }), options.status);
-      return request.method === 'POST' ? once(request, session, input, work) : work();
+      const query = new URL(request.url).searchParams;
+      const hasBody = request.method !== 'GET' && request.method !== 'DELETE';
+      const body = hasBody ? await readBody(request) : { text: '', json: undefined };
+      const work = async () => {
+        const input = options.schema ? bySchema(options.schema, body.json) : (body.json as Input);
+        return jsonResponse(await options.run({ session, input, params, query }), options.status);
+      };
+      return request.method === 'POST' ? once(request, session, body.text, work) : work();
     });
+}
+
+function bySchema<Input>(schema: z.ZodType<Input>, json: unknown): Input {
+  const read = schema.safeParse(json);
+  if (!read.success) throw schemaError(read.error);
+  return read.data;
 }

@@ -1,10 +1,5 @@
 import type { FettleError } from '../errors';
 
-export interface FieldProblem {
-  path: string;
-  message: string;
-}
-
 const STATUS: Record<FettleError['code'], { status: number; title: string }> = {
   MALFORMED: { status: 400, title: 'The request can’t be read' },
   UNAUTHENTICATED: { status: 401, title: 'Not signed in' },

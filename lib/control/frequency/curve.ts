@@ -3,6 +3,7 @@ import { CELL_WIDTH, type ScaledLoop } from './scaled-loop';
 const MOST_NODES = 5000;
 /** A lightly damped pair nearer to the axis than this fraction of the frequency is not resolved any further. */
 const FINEST_STEP = 1e-9;
+const UNRESOLVED = 1e-8;
 /** The first node lies where the low-frequency asymptote is this far above (or below) 1. */
 const ASYMPTOTE_SHARE = 0.01;
 
@@ -67,7 +68,9 @@ export function nodeAfter(loop: ScaledLoop, from: CurveNode, w: number): CurveNo
 
 /** Phase with dead time at the w last evaluated, in the branch nearest to what the slopes predict from `from`. */
 export function continuedPhase(loop: ScaledLoop, from: CurveNode, w: number): number {
-  const slope = (from.phaseSlope + loop.deadTime + loop.phaseSlope) / 2;
+  // Across a root on the axis the slopes say nothing; in steps this small the phase without dead time hardly moves.
+  const unresolved = w - from.w < UNRESOLVED * w;
+  const slope = unresolved ? 0 : (from.phaseSlope + loop.deadTime + loop.phaseSlope) / 2;
   const expected = from.phase + loop.deadTime * from.w + (w - from.w) * slope;
   const turns = Math.round((expected - loop.phase) / (2 * Math.PI));
   return loop.phase + turns * 2 * Math.PI - loop.deadTime * w;

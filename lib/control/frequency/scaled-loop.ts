@@ -13,6 +13,8 @@ const LN_DRIFT = (2 * HALF_CELL) / (1 - HALF_CELL) ** 3;
 const PHASE_DRIFT = (6 * HALF_CELL) / (1 - HALF_CELL) ** 4;
 /** Poles and zeros nearer than this, relative to their size, do not shape the curve between them. */
 const CANCELLED = 1e-12;
+/** Square of the distance, relative, that stands for 0 where a frequency hits a root on the imaginary axis. */
+const ON_ROOT = 1e-24;
 
 /**
  * L(s) = K · s^(-originOrder) · num(s)/den(s) · e^(-deadTime·s) in a time unit of its own, with monic num and den that
@@ -120,7 +122,7 @@ export class ScaledLoop {
       const re = this.rootRe[i];
       const dw = w - this.rootIm[i];
       const weight = this.rootWeight[i];
-      const d2 = re * re + dw * dw;
+      const d2 = Math.max(re * re + dw * dw, ON_ROOT * w * w);
       const inverse = 1 / d2;
       if (d2 < nearest2) nearest2 = d2;
       lnBend += weight * (re - dw) * (re + dw) * inverse * inverse;
@@ -153,8 +155,8 @@ export class ScaledLoop {
       vRe = nextV;
     }
     const v2 = vRe * vRe + vIm * vIm;
-    const re = (dRe * vRe + dIm * vIm) / v2;
-    const im = (dIm * vRe - dRe * vIm) / v2;
+    const re = v2 === 0 ? 0 : (dRe * vRe + dIm * vIm) / v2;
+    const im = v2 === 0 ? 0 : (dIm * vRe - dRe * vIm) / v2;
     // With y = 1/s = jx: d/ds = -y²·d/dy = x²·d/dy.
     this.ratioRe = high ? re * x * x : re;
     this.ratioIm = high ? im * x * x : im;

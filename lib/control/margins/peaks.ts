@@ -17,6 +17,8 @@ const SHORT = 0.25;
 const DEEPEST_SPLIT = 60;
 /** Below |L| = 1/50 the curve is next to the origin, and its size need not be resolved. */
 const LN_NEGLIGIBLE = -4;
+/** |L| or its distance from L(∞) is below 1e-6 of its last value there. */
+const TAIL_OCTAVES = 20;
 /** The search leaves out what is this little, relative, above the best known: rounding, not a higher peak. */
 const MARGIN = 1e-9;
 /** Peaks that differ by less, relative, are equal: the lowest frequency is named, limits first. */
@@ -60,11 +62,23 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
       search(between, b, depth + 1);
       return;
     }
-    const from = a.w === 0 ? nudged(loop, a, b) : a;
-    if (!(growth(sign, from) > 0 && growth(sign, b) <= 0)) return;
-    const peak = climb(loop, from, b, sign);
+    tryPeak(a.w === 0 ? nudged(loop, a, b) : a, b);
+  }
+
+  function tryPeak(a: CurveNode, b: CurveNode): void {
+    if (!(growth(sign, a) > 0 && growth(sign, b) <= 0)) return;
+    const peak = climb(loop, a, b, sign);
     raise(peak.value);
     if (best === null || peak.value > best.value * (1 + SAME)) best = peak;
+  }
+
+  /** Beyond the last node L is a few terms in 1/w, so that octaves resolve it; with dead time all is before. */
+  function searchTail(from: CurveNode, octave: number): void {
+    const ln = sign * from.ln;
+    if (octave === TAIL_OCTAVES || ln < bandLow || ln > bandHigh) return;
+    const next = nodeAfter(loop, from, 2 * from.w);
+    tryPeak(from, next);
+    searchTail(next, octave + 1);
   }
 
   raise(ends.value);
@@ -74,6 +88,7 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
     if (sign * node.ln > bandLow && sign * node.ln < bandHigh) raise(sensitivity(sign * node.ln, node.phase));
   for (let i = 1; i < nodes.length; i += 1)
     if (!isSingular(nodes[i - 1], nodes[i])) search(nodes[i - 1], nodes[i], 0);
+  if (loop.deadTime === 0) searchTail(nodes[nodes.length - 1], 0);
   const inside = best as Peak | null;
   if (inside === null) return ends;
   // A limit at infinity that only the crossovers of a pure dead time reach is reached by the first of them.

@@ -17,18 +17,11 @@ export interface SheetData {
   changeId: string;
   number: string;
   axis: { id: string; tag: string; name: string; path: string; deviceLabel: string };
-  fromVersion: number | null;
-  toVersion: number;
   rows: readonly SheetRow[];
   form: string;
   cautions: readonly string[];
-  reason: string;
   test: string;
   wayBack: string;
-  validUntil: string | null;
-  state: string;
-  /** May this person carry the sheet out? */
-  mayApply: boolean;
 }
 
 export const STEPS = ['before', 'found', 'enter', 'close'] as const;

@@ -57,7 +57,12 @@ function RuleChoice({ state, dispatch, preview }: GainsProps) {
         onChange={(event) => {
           const id = event.target.value;
           const chosen = RULES.find((one) => one.id === id);
-          if (chosen) dispatch({ do: 'rule', rule: chosen.id, types: TYPES.filter((type) => chosen.types.includes(type)) });
+          if (chosen)
+            dispatch({
+              do: 'rule',
+              rule: chosen.id,
+              types: TYPES.filter((type) => chosen.types.includes(type)),
+            });
           else dispatch({ do: 'by-hand', start: preview?.controller ?? null });
         }}
         hint={rule && state.source === 'rule' ? rule.aim : undefined}

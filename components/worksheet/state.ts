@@ -42,7 +42,7 @@ export type WorksheetAction =
   | { do: 'filter-order'; order: 1 | 2 };
 
 /** Digits enough to type a computed gain back without a change that anyone could measure. */
-function asTyped(value: number): string {
+export function asTyped(value: number): string {
   return Number.isFinite(value) ? String(Number(value.toPrecision(6))) : '';
 }
 

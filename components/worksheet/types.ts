@@ -31,6 +31,8 @@ export interface WorksheetAxis {
   loadCases: readonly { name: string; plant: Plant | null; text: string }[];
   lastVersion: number;
   lastKept: KeptVersion | null;
+  /** How the last version was made, so that the page opens where it was left. */
+  lastSettings: { rule: string | null; settings: Readonly<Record<string, unknown>> | null } | null;
   inService: (KeptVersion & { since: string }) | null;
   openChanges: readonly OpenChange[];
   may: { keep: boolean; handOver: boolean };

@@ -1,0 +1,28 @@
+import type { Metadata } from 'next';
+import Link from 'next/link';
+import { notFound } from 'next/navigation';
+import { AxisForm } from '@/components/forms/axis-form';
+import { PageHead } from '@/components/ui/section';
+import { requireSession } from '@/lib/auth/gate';
+import { findMachine } from '../../_find';
+
+export const metadata: Metadata = { title: 'Add an axis' };
+
+export default async function NewAxisPage({ params }: { params: Promise<{ machine: string }> }) {
+  const { scope } = await requireSession();
+  const machine = await findMachine(scope, (await params).machine);
+  if (!machine) notFound();
+  return (
+    <>
+      <PageHead
+        path={
+          <Link className="link" href={`/machines/${machine.id}`}>
+            {machine.name}
+          </Link>
+        }
+        title="Add an axis"
+      />
+      <AxisForm machineId={machine.id} />
+    </>
+  );
+}

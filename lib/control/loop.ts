@@ -32,7 +32,7 @@ export function controllerTransfer(controller: IdealController): { num: number[]
 }
 
 /** Denominator of the measurement filter; [1] without one. */
-export function filterDenominator(filter: MeasurementFilter | undefined): number[] {
+function filterDenominator(filter: MeasurementFilter | undefined): number[] {
   if (filter === undefined || filter.timeConstantS === 0) return [1];
   const { timeConstantS, order } = filter;
   if (!(timeConstantS > 0 && timeConstantS < Infinity))
@@ -74,19 +74,4 @@ export function checkPlant(plant: Plant): void {
     throw new RangeError('plant: the degree of num must not be higher than the degree of den');
   if (!(deadTimeS >= 0 && deadTimeS < Infinity))
     throw new RangeError(`plant: deadTimeS must be 0 s or more and finite, got ${deadTimeS}`);
-}
-
-/**
- * The same polynomial in the time unit `timeUnitS`: with s = z/timeUnitS, returns the coefficients over z, times the
- * factor that makes the largest magnitude 1.
- */
-export function scaledInTime(
-  p: readonly number[],
-  timeUnitS: number,
-): { coefficients: number[]; factor: number } {
-  const degree = p.length - 1;
-  const coefficients = p.map((c, i) => c * Math.pow(timeUnitS, i - degree));
-  const largest = coefficients.reduce((max, c) => Math.max(max, Math.abs(c)), 0);
-  if (largest === 0) return { coefficients, factor: 1 };
-  return { coefficients: coefficients.map((c) => c / largest), factor: 1 / largest };
 }

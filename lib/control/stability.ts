@@ -1,5 +1,5 @@
-import { loopCurve } from './frequency/curve';
-import { unitGainCrossings } from './frequency/crossings';
+import { lnMagnitudeAtInfinity, loopCurve } from './frequency/curve';
+import { STARTS_ON_ONE, unitGainCrossings } from './frequency/crossings';
 import { loopFactors } from './frequency/loop-factors';
 import { ScaledLoop } from './frequency/scaled-loop';
 import { openLoop, type TransferFunction } from './loop';
@@ -12,6 +12,8 @@ export { isHurwitz } from './stability/hurwitz';
 
 /** A gain crossover whose L is this near to -1 lies on the stability limit, to rounding. */
 const ON_LIMIT = 1e-12;
+/** 1 + L(0) this small is 0 to rounding: a closed-loop pole lies at the origin. */
+const CANCELS = 1e-13;
 
 /**
  * Is the closed loop stable: no zero of Q + P·e^(-deadTimeS·s) in Re s ≥ 0, for L = P/Q · e^(-deadTimeS·s)?
@@ -32,7 +34,8 @@ export function isStable(plant: Plant, controller: IdealController): boolean {
 /** The answer where no count is needed: no dead time, a loop gain that does not fall off, or a root at the origin. */
 export function stableByPolynomial({ num, den, deadTimeS }: TransferFunction): boolean | null {
   const closed = add(den, num);
-  if (closed[closed.length - 1] === 0) return false;
+  const last = closed.length - 1;
+  if (Math.abs(closed[last]) <= CANCELS * Math.abs(den[den.length - 1])) return false;
   const gainAtInfinity = num.length === den.length ? num[0] / den[0] : 0;
   if (deadTimeS === 0) return 1 + gainAtInfinity > 0 && isHurwitz(closed);
   if (num.every((c) => c === 0)) return isHurwitz(den);
@@ -47,14 +50,13 @@ export function stableByPolynomial({ num, den, deadTimeS }: TransferFunction): b
  */
 export function stableByCount(loop: ScaledLoop, crossings: readonly { w: number; phase: number }[]): boolean {
   const { zeros, poles } = loop.factors;
-  let aboveOne = loop.originOrder > 0 || (loop.originOrder === 0 && loop.lnLowGain > 0);
+  let aboveOne = startsAboveOne(loop, crossings.length);
   let turn = 0;
   let from = 0;
   for (const { w, phase } of [...crossings, { w: Infinity, phase: 0 }]) {
     const to = w * loop.unitRadS;
-    turn += aboveOne
-      ? turnOf(zeros, from, to) - loop.deadTime * (w - from / loop.unitRadS)
-      : turnOf(poles, from, to);
+    const delayTurn = loop.deadTime > 0 ? loop.deadTime * (w - from / loop.unitRadS) : 0;
+    turn += aboveOne ? turnOf(zeros, from, to) - delayTurn : turnOf(poles, from, to);
     if (w === Infinity) break;
     const lag = principal(phase);
     if (Math.PI - Math.abs(lag) < ON_LIMIT) return false;
@@ -63,6 +65,13 @@ export function stableByCount(loop: ScaledLoop, crossings: readonly { w: number;
     from = to;
   }
   return Math.round(turn / (Math.PI / 2)) === poles.length;
+}
+
+/** Is |L| above 1 just after w = 0? Where L(0) is 1 to rounding, told from the other end by the number of crossovers. */
+function startsAboveOne(loop: ScaledLoop, crossings: number): boolean {
+  if (loop.originOrder !== 0) return loop.originOrder > 0;
+  if (Math.abs(loop.lnLowGain) > STARTS_ON_ONE) return loop.lnLowGain > 0;
+  return lnMagnitudeAtInfinity(loop) > 0 !== (crossings % 2 === 1);
 }
 
 /** By how much the product of (jw - root) turns between two frequencies. */

@@ -7,6 +7,8 @@ export type Quantity = 'ln' | 'phase';
 const DEEPEST_SPLIT = 40;
 /** A stretch that cannot leave this band around the wanted value touches it rather than crosses it. */
 const TOUCHING = 1e-11;
+/** ln|L(0)| this small is 0 to rounding: the curve starts on |L| = 1 and does not cross it there. */
+export const STARTS_ON_ONE = 1e-14;
 const WIDTH_LIMIT = 1e-8;
 
 /** Between neighbours a and b, is the quantity certain to be monotone? */
@@ -46,19 +48,14 @@ export function unitGainCrossings({ loop, nodes }: LoopCurve): { w: number; phas
     if (Math.min(a.ln, b.ln) - reach > 0 || Math.max(a.ln, b.ln) + reach < 0) return;
     const touches = Math.abs(a.ln) + Math.abs(b.ln) + reach < TOUCHING;
     if (isMonotone(a, b, 'ln') || touches || depth === DEEPEST_SPLIT) {
-      if (crosses(a.ln, b.ln, a)) found.push(solve(loop, a, b, 'ln', 0));
+      const startsThere = a.w === 0 && Math.abs(a.ln) <= STARTS_ON_ONE;
+      if (a.ln > 0 !== b.ln > 0 && !startsThere) found.push(solve(loop, a, b, 'ln', 0));
       return;
     }
     const between = middle(loop, a, b);
     search(a, between, depth + 1);
     search(between, b, depth + 1);
   }
-}
-
-/** A curve that starts on the value at w = 0, to rounding, does not cross it there. */
-function crosses(atA: number, atB: number, a: CurveNode): boolean {
-  if (a.w === 0 && Math.abs(atA) < TOUCHING / 1e3) return false;
-  return atA > 0 !== atB > 0;
 }
 
 /**

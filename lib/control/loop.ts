@@ -32,7 +32,7 @@ export function controllerTransfer(controller: IdealController): { num: number[]
 }
 
 /** Denominator of the measurement filter; [1] without one. */
-function filterDenominator(filter: MeasurementFilter | undefined): number[] {
+export function filterDenominator(filter: MeasurementFilter | undefined): number[] {
   if (filter === undefined || filter.timeConstantS === 0) return [1];
   const { timeConstantS, order } = filter;
   if (!(timeConstantS > 0 && timeConstantS < Infinity))

@@ -67,3 +67,17 @@ export function loadMetrics(trajectory: Trajectory, options: MetricOptions): Loa
     ...resample(trajectory, horizonS, points),
   };
 }
+
+/**
+ * Time after which y stays within a share of its final value ('final') or of its largest size ('peak') around the
+ * final value, s; null when it is outside at the end. With a final value of 0, the largest size is taken.
+ */
+export function settledAfter(
+  trajectory: Trajectory,
+  final: number,
+  share: number,
+  of: 'final' | 'peak',
+): number | null {
+  const size = of === 'final' && final !== 0 ? Math.abs(final) : Math.abs(extreme(trajectory, 'y', 0).value);
+  return lastExit(trajectory, final, share * size);
+}

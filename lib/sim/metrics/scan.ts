@@ -41,13 +41,13 @@ export function extreme(trajectory: Trajectory, signal: Signal, sign: 1 | -1 | 0
   const startSlope = signal === 'y' ? trajectory.dy0 : trajectory.du0;
   const end = signal === 'y' ? trajectory.y1 : trajectory.u1;
   const endSlope = signal === 'y' ? trajectory.dy1 : trajectory.du1;
-  let best = -Infinity;
+  let best = Number.NEGATIVE_INFINITY;
   let value = 0;
   let time = 0;
   const take = (candidate: number, at: number) => {
     const size = sign === 0 ? Math.abs(candidate) : sign * candidate;
     // Equal peaks count once, at their first time; rounding must not make a later one higher.
-    if (size > best + 1e-12 * Math.abs(best)) {
+    if (best === Number.NEGATIVE_INFINITY || size > best + 1e-12 * Math.abs(best)) {
       best = size;
       value = candidate;
       time = at;

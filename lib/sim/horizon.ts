@@ -1,0 +1,75 @@
+import type { IdealController, Margins, Plant } from '../control/types';
+import { respond } from './exact';
+import { closedLoopPoles } from './exact/without-dead-time';
+import { finalValues } from './final-values';
+import { settledAfter } from './metrics';
+
+export interface Horizon {
+  readonly horizonS: number;
+  /** Both responses stay within 0.5 % for the last fifth of it. */
+  readonly settled: boolean;
+}
+
+/** Share of the final value, or of the peak after a load step, within which a response counts as at rest. */
+const REST = 0.005;
+/** The last fifth of the horizon must be at rest. */
+const SHOWN = 0.8;
+const MOST_TIME_CONSTANTS = 200;
+const LEAST_DEAD_TIMES = 4;
+const DOUBLINGS = 8;
+const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
+
+/** The next round length: with it the scales of a plot stand still while the gains move a little. */
+function roundUp(value: number): number {
+  const decade = 10 ** Math.floor(Math.log10(value));
+  const nice = NICE.find((step) => step * decade >= value * (1 - 1e-9)) ?? 10;
+  return Number((nice * decade).toPrecision(3));
+}
+
+/** A first guess, and what is too long in any case. */
+function bounds(
+  plant: Plant,
+  controller: IdealController,
+  margins: Margins,
+): { first: number; most: number } {
+  if (plant.deadTimeS === 0) {
+    const slowest = Math.min(...closedLoopPoles(plant, controller).map(({ re }) => -re));
+    const timeConstant = Number.isFinite(slowest) && slowest > 0 ? 1 / slowest : 1;
+    return { first: 8 * timeConstant, most: MOST_TIME_CONSTANTS * timeConstant };
+  }
+  const crossover = margins.gainCrossover ?? margins.phaseCrossover;
+  const timeConstant = crossover && Number.isFinite(crossover) ? 1 / crossover : plant.deadTimeS;
+  const slow = Number.isFinite(controller.ti) ? Math.max(timeConstant, controller.ti / 4) : timeConstant;
+  return {
+    first: Math.max(10 * plant.deadTimeS, 12 * slow),
+    most: MOST_TIME_CONSTANTS * Math.max(slow, plant.deadTimeS),
+  };
+}
+
+/**
+ * A horizon that shows both responses of a stable linear loop at rest: they stay within 0.5 % for its last fifth; at
+ * least 4 dead times, at most 200 closed-loop time constants. `settled` is false when that is not long enough.
+ */
+export function automaticHorizon(plant: Plant, controller: IdealController, margins: Margins): Horizon {
+  const { first, most } = bounds(plant, controller, margins);
+  const final = finalValues(plant, controller);
+  const least = LEAST_DEAD_TIMES * plant.deadTimeS;
+  let horizonS = Math.max(first, least);
+  for (let i = 0; i < DOUBLINGS; i += 1) {
+    const setpoint = settledAfter(
+      respond(plant, controller, 'setpoint', horizonS),
+      final.setpoint,
+      REST,
+      'final',
+    );
+    const load = settledAfter(respond(plant, controller, 'load', horizonS), final.load, REST, 'peak');
+    if (setpoint !== null && load !== null) {
+      const needed = Math.max(setpoint, load) / SHOWN;
+      if (needed <= horizonS)
+        return { horizonS: roundUp(Math.max(needed, least, horizonS / 50)), settled: true };
+    }
+    if (2 * horizonS > most) break;
+    horizonS *= 2;
+  }
+  return { horizonS: roundUp(horizonS), settled: false };
+}

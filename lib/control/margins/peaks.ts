@@ -19,8 +19,8 @@ const DEEPEST_SPLIT = 60;
 const LN_NEGLIGIBLE = -4;
 /** |L| or its distance from L(∞) is below 1e-6 of its last value there. */
 const TAIL_OCTAVES = 20;
-/** The search leaves out what is this little, relative, above the best known: rounding, not a higher peak. */
-const MARGIN = 1e-9;
+/** The search leaves out what is this little above the best known, relative and times the value: rounding. */
+const MARGIN = 1e-12;
 /** Peaks that differ by less, relative, are equal: the lowest frequency is named, limits first. */
 const SAME = 1e-11;
 
@@ -40,8 +40,9 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
   let bandHigh = Infinity;
 
   function raise(value: number): void {
-    if (value * (1 - MARGIN) <= known) return;
-    known = value * (1 - MARGIN);
+    const surely = value * (1 - Math.min(1e-3, MARGIN * Math.max(1, value)));
+    if (surely <= known) return;
+    known = surely;
     bandLow = known > 1 ? Math.log1p(-1 / known) : -Infinity;
     bandHigh = Math.log1p(1 / known);
   }

@@ -1,0 +1,7 @@
+import type { Plant } from '../types';
+
+/** A plant as a text that reads back to exactly the same plant: `[2420] / [1 118.8 1936], delay 3`. */
+export function plantToText({ num, den, deadTimeS }: Plant): string {
+  const lists = `[${num.join(' ')}] / [${den.join(' ')}]`;
+  return deadTimeS > 0 ? `${lists}, delay ${deadTimeS}` : lists;
+}

@@ -1,0 +1,58 @@
+import { ok, refuse } from '../../result';
+import { trimmed } from '../polynomial';
+import { roots } from '../roots';
+import type { Plant } from '../types';
+import { HIGHEST_ORDER, type TextResult } from './types';
+
+/**
+ * Judges coefficients as a plant: finite, not zero, proper, order up to 20, dead time not negative.
+ *
+ * @param num, den descending powers of s
+ * @param deadTimeS s
+ * @returns the plant without leading zeros, or what is wrong and what would be right
+ */
+export function validatePlant(
+  num: readonly number[],
+  den: readonly number[],
+  deadTimeS: number,
+): TextResult<Plant> {
+  if (num.length === 0 || den.length === 0)
+    return refuse('EMPTY', 'Numerator and denominator need a coefficient each.');
+  if (![...num, ...den, deadTimeS].every(Number.isFinite))
+    return refuse('NOT_FINITE', 'A coefficient or the dead time is not a finite number.');
+  const top = trimmed(num);
+  const bottom = trimmed(den);
+  if (bottom.every((c) => c === 0)) return refuse('ZERO_DENOMINATOR', 'The denominator is zero.');
+  if (top.every((c) => c === 0))
+    return refuse('ZERO_PLANT', 'The numerator is zero: such a plant does not answer at all.');
+  if (top.length > bottom.length)
+    return refuse(
+      'IMPROPER',
+      `Improper: the numerator has degree ${top.length - 1}, the denominator only ${bottom.length - 1}. A real plant has at least as many poles as zeros.`,
+    );
+  if (bottom.length - 1 > HIGHEST_ORDER)
+    return refuse(
+      'ORDER_TOO_HIGH',
+      `The order is ${bottom.length - 1}; up to ${HIGHEST_ORDER} can be handled.`,
+    );
+  if (deadTimeS < 0)
+    return refuse(
+      'NEGATIVE_DEAD_TIME',
+      `The dead time is ${deadTimeS} s; it can't be negative. Write e^(-θ s) with θ ≥ 0.`,
+    );
+  return ok({ num: top, den: bottom, deadTimeS });
+}
+
+/** A sentence when numerator and denominator share a root: it is kept, but may not be meant. */
+export function commonFactorWarning({ num, den }: Plant): string | null {
+  if (num.length < 2) return null;
+  const poles = roots(den);
+  const shared = roots(num).find((zero) =>
+    poles.some(
+      (pole) => Math.hypot(zero.re - pole.re, zero.im - pole.im) <= 1e-7 * Math.hypot(zero.re, zero.im),
+    ),
+  );
+  const atOrigin = num[num.length - 1] === 0 && den[den.length - 1] === 0;
+  if (!shared && !atOrigin) return null;
+  return 'Numerator and denominator have a root in common; it is not cancelled.';
+}

@@ -9,12 +9,15 @@ export interface Responses {
   readonly load: LoadResponse;
 }
 
-/** A simulation engine as the check uses it: one response each to a unit step of set-point and load. */
+/**
+ * A simulation engine as the check uses it: one response each to a unit step of set-point and load; null when the
+ * loop is too much work for it.
+ */
 export type Engine = (
   plant: Plant,
   controller: IdealController,
   options: { horizonS: number; points?: number; actuator?: Actuator; sampleTimeS?: number },
-) => Responses;
+) => Responses | null;
 
 export interface CheckOptions {
   /** Output limits; with them the responses are those of the limited loop, the margins those of the linear one. */
@@ -31,6 +34,9 @@ export interface CheckOptions {
 
 /** Two engines that differ by more than this share of the response have not checked each other. */
 const AGREED = 1e-4;
+
+const ONE_ENGINE =
+  'The second engine could not follow this loop in reasonable time: this is not a check yet.';
 
 function isLimited(actuator: Actuator | undefined): boolean {
   return (
@@ -67,6 +73,7 @@ function linearResponses(plant: Plant, controller: IdealController, horizonS: nu
   const responses = simulateExact(plant, controller, { horizonS, points });
   if (!secondEngine) return { responses, engines: null, warnings: [] };
   const second = secondEngine(plant, controller, { horizonS, points });
+  if (!second) return { responses, engines: null, warnings: [ONE_ENGINE] };
   const engines: EngineAgreement = { agreement: agreementOf(responses, second), engines: ['exact', 'ode'] };
   const warnings =
     engines.agreement > AGREED
@@ -96,6 +103,10 @@ export function checkLoop(plant: Plant, controller: IdealController, options: Ch
     return { stable, margins, ...responses, engines, warnings: [...slow, ...warnings, ...linear] };
   }
   const responses = secondEngine(plant, controller, { horizonS, points, actuator, sampleTimeS });
+  if (!responses) {
+    const warnings = ['The limited or sampled loop could not be followed in reasonable time.'];
+    return { stable, margins, setpoint: null, load: null, engines: null, warnings };
+  }
   const alone = ['With limits or sampling the responses come from one engine alone.'];
   return { stable, margins, ...responses, engines: null, warnings: [...slow, ...alone] };
 }

@@ -15,6 +15,8 @@ const REST = 0.005;
 /** The last fifth of the horizon must be at rest. */
 const SHOWN = 0.8;
 const MOST_TIME_CONSTANTS = 200;
+/** With dead time the slowest mode is not known beforehand: the search may go on longer than its crossover suggests. */
+const SEARCH = 10;
 const LEAST_DEAD_TIMES = 4;
 const DOUBLINGS = 8;
 const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
@@ -42,7 +44,7 @@ function bounds(
   const slow = Number.isFinite(controller.ti) ? Math.max(timeConstant, controller.ti / 4) : timeConstant;
   return {
     first: Math.max(10 * plant.deadTimeS, 12 * slow),
-    most: MOST_TIME_CONSTANTS * Math.max(slow, plant.deadTimeS),
+    most: SEARCH * MOST_TIME_CONSTANTS * Math.max(slow, plant.deadTimeS),
   };
 }
 

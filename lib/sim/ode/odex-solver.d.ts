@@ -13,6 +13,8 @@ export class Solver {
   /** 0 stands for the whole interval. */
   maxStepSize: number;
   maxExtrapolationColumns: number;
+  /** How many derivatives of a step are tested for instability. */
+  stabilityCheckCount: number;
   denseOutput: boolean;
   denseComponents: number[];
   relativeTolerance: number | number[];

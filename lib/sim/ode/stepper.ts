@@ -25,6 +25,9 @@ export interface Run {
 /** A response above this times the signal scale has left every useful range; an unstable loop gets there. */
 const DIVERGED_ABOVE = 1e12;
 
+/** Relative length of a run below which it is passed over. */
+const ROUNDING = 4e-15;
+
 const LAST_NODE = NODE_FRACTIONS.length - 1;
 
 /** Drives the solver run by run and copies every step of it into the solution. */
@@ -52,6 +55,8 @@ export class Stepper {
     this.solver.maxStepSize = settings.longestStep;
     this.solver.maxSteps = settings.budget;
     this.solver.initialStepSize = settings.end * 1e-5;
+    // Its test compares two derivatives only and takes the noise of a loop at rest for instability.
+    this.solver.stabilityCheckCount = 0;
     this.solver.denseOutput = true;
     // Where a run can stop within a step, the whole state is needed there.
     this.solver.denseComponents = equations.limited ? this.state.map((_, index) => index) : equations.visible;
@@ -67,7 +72,11 @@ export class Stepper {
 
   /** Integrates from where the last run ended to `run.end`, or to the moment at which the run has to stop. */
   advance(run: Run): void {
-    const before = this.x;
+    // The solver takes a run shorter than the rounding of its time for done.
+    if (run.end - this.x <= ROUNDING * run.end) {
+      this.x = run.end;
+      return;
+    }
     this.solver.solve(
       (x, state) => {
         this.evaluations += 1;
@@ -77,11 +86,12 @@ export class Stepper {
       this.x,
       this.state,
       run.end,
-      (_, from, to, state, dense) =>
-        dense && to !== from ? this.keepStep(run, from, to, state, dense) : true,
+      (_, from, to, state, dense) => {
+        // Before the first step there is nothing to keep; a step of no length would go on for ever.
+        if (!dense) return true;
+        return to > from && this.keepStep(run, from, to, state, dense);
+      },
     );
-    // The solver leaves out a run that is shorter than the rounding of its time.
-    if (this.x === before) this.x = run.end;
   }
 
   private keepStep(run: Run, from: number, to: number, state: number[], dense: DenseOutput): boolean {

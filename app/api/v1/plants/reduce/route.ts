@@ -1,4 +1,4 @@
-import { reducePlant } from '@/lib/control/reduction';
+import { reducePlant } from '@/lib/control/reduction/reduce';
 import { FettleError } from '@/lib/errors';
 import { endpoint } from '@/lib/http/endpoint';
 import { reduceRequest } from '@/lib/schemas/calculation';

@@ -1,82 +1,104 @@
 import type { IdealController, Plant } from '../../control/types';
-import { finalValues } from '../final-values';
-import { loadMetrics, setpointMetrics, Trajectory } from '../metrics';
+import { ok, type Result } from '../../result';
+import { loadMetrics, setpointMetrics } from '../metrics';
 import type { LoadResponse, SetpointResponse } from '../types';
-import { solveLoop, type OdeOptions, type SolvedResponse } from './solve-loop';
+import type { IntegrationRefusal } from './integrate';
+import { limitedFinals } from './limited-finals';
+import { solveLoop, type OdeOptions } from './solve-loop';
+import { trajectoryOf } from './trajectory';
 
-/** Cubics into which each of the solver's long steps is cut for the figures. */
-const CUTS = 12;
+export type { OdeOptions } from './solve-loop';
+
+export interface OdeResponses {
+  readonly setpoint: SetpointResponse;
+  readonly load: LoadResponse;
+}
+
 const DEFAULT_POINTS = 600;
+/** An output this close to a limit, relative to it, rests on it. */
+const AT_LIMIT = 1e-9;
 
-/** The solution as short cubics in the units of the plant; where it jumps, the step ends there anyway. */
-function trajectoryOf({ solution, timeUnitS, yUnit, uUnit }: SolvedResponse, horizonS: number): Trajectory {
-  const trajectory = new Trajectory(solution.count * CUTS);
-  for (let piece = 0; piece < solution.count; piece += 1) {
-    const from = solution.from[piece];
-    const length = solution.to[piece] - from;
-    const rate = 2 / (length * timeUnitS);
-    for (let cut = 0; cut < CUTS; cut += 1) {
-      const last = piece === solution.count - 1 && cut === CUTS - 1;
-      const index = trajectory.add(last ? horizonS : (from + (length * (cut + 1)) / CUTS) * timeUnitS);
-      const a = (2 * cut) / CUTS - 1;
-      const b = (2 * (cut + 1)) / CUTS - 1;
-      trajectory.y0[index] = yUnit * solution.y.value(piece, a);
-      trajectory.dy0[index] = yUnit * rate * solution.y.slope(piece, a);
-      trajectory.y1[index] = yUnit * solution.y.value(piece, b);
-      trajectory.dy1[index] = yUnit * rate * solution.y.slope(piece, b);
-      trajectory.u0[index] = uUnit * solution.output.value(piece, a);
-      trajectory.du0[index] = uUnit * rate * solution.output.slope(piece, a);
-      trajectory.u1[index] = uUnit * solution.output.value(piece, b);
-      trajectory.du1[index] = uUnit * rate * solution.output.slope(piece, b);
-    }
+/** The engine could not finish: the loop grows without bound, or has parts too fast for its horizon. */
+export class OdeRefused extends RangeError {
+  constructor(
+    readonly code: IntegrationRefusal,
+    message: string,
+  ) {
+    super(message);
+    this.name = 'OdeRefused';
   }
-  return trajectory;
-}
-
-/** Steady gain G(0) of a plant without integrator. */
-function steadyGain({ num, den }: Plant): number {
-  return num[num.length - 1] / den[den.length - 1];
-}
-
-/** With limits a loop may stay at one of them: its y then goes to G(0)·us, not to what the linear loop says. */
-function limitedFinal(
-  trajectory: Trajectory,
-  plant: Plant,
-  linear: number,
-  load: number,
-  options: OdeOptions,
-): number {
-  const { low = -Infinity, high = Infinity } = options.actuator ?? {};
-  const output = trajectory.u1[trajectory.count - 1];
-  const gain = steadyGain(plant);
-  const stuck = output <= low || output >= high;
-  return stuck && Number.isFinite(gain) ? gain * (output + load) : linear;
 }
 
 /**
- * Set-point and load response of a loop by the adaptive extrapolation method (Hairer, Nørsett and Wanner's ODEX) with
- * exact dead time from a dense history, output limits with back-calculation, and sampled controllers.
+ * Set-point and load response of a loop by adaptive extrapolation (Hairer & Wanner's ODEX): independent of the exact
+ * engine in formulation and stepping, and the engine for limits, rate limits and sampled controllers.
  *
- * @returns null when the equations need more evaluations than the budget allows
- * @throws RangeError for options outside their range
+ * Definitions: a unit step of the set-point; a unit step of the load at the plant input, before the dead time. The dead
+ * time is exact (method of steps), the measurement filter acts on y only. Output limits: us = min(max(v, low), high),
+ * integral with back-calculation (us − v)/Tt; with a slew rate us follows that at no more than the rate, from 0 at t = 0.
+ * Sampled: zero-order hold, derivative by backward difference, integral by forward Euler.
+ *
+ * @param plant proper, dead time ≥ 0
+ * @param controller ideal form, kp ≠ 0
+ * @param options horizon, points of the curves, actuator, sample time, tolerance, budget
+ * @returns both responses with their figures
+ * @throws RangeError for a value outside its range; OdeRefused (with a code) for a loop that grows without bound or
+ *   would need more evaluations than the budget
+ * Method: Hairer, Nørsett & Wanner, Solving Ordinary Differential Equations I (1993), II.9 and II.17.
  */
-export function simulateOde(
+export function simulateOde(plant: Plant, controller: IdealController, options: OdeOptions): OdeResponses {
+  const result = trySimulateOde(plant, controller, options);
+  if (!result.ok) throw new OdeRefused(result.code, result.message);
+  return result.value;
+}
+
+/** As `simulateOde`, with the refusals as a Result. */
+export function trySimulateOde(
   plant: Plant,
   controller: IdealController,
   options: OdeOptions,
-): { setpoint: SetpointResponse; load: LoadResponse } | null {
+): Result<OdeResponses, IntegrationRefusal> {
+  const { horizonS, points = DEFAULT_POINTS, actuator } = options;
+  requireInRange(plant, controller, options);
   const setpoint = solveLoop(plant, controller, 'setpoint', options);
+  if (!setpoint.ok) return setpoint;
   const load = solveLoop(plant, controller, 'load', options);
-  if (!setpoint.ok || !load.ok) return null;
-  const { horizonS, points = DEFAULT_POINTS } = options;
-  const linear = finalValues(plant, controller);
-  const responses = [trajectoryOf(setpoint.value, horizonS), trajectoryOf(load.value, horizonS)];
-  const final = {
-    setpoint: limitedFinal(responses[0], plant, linear.setpoint, 0, options),
-    load: limitedFinal(responses[1], plant, linear.load, 1, options),
+  if (!load.ok) return load;
+  const finals = limitedFinals(plant, controller, actuator);
+  return ok({
+    setpoint: setpointMetrics(trajectoryOf(setpoint.value, horizonS), {
+      horizonS,
+      points,
+      final: finals.setpoint,
+    }),
+    load: loadMetrics(trajectoryOf(load.value, horizonS), { horizonS, points, final: finals.load }),
+  });
+}
+
+function requireInRange(plant: Plant, controller: IdealController, options: OdeOptions): void {
+  const { horizonS, points = DEFAULT_POINTS, sampleTimeS, tolerance, actuator = {} } = options;
+  const positive = (name: string, value: number | undefined): void => {
+    if (value !== undefined && !(value > 0 && value < Infinity)) {
+      throw new RangeError(`${name} must be above 0 and finite, got ${value}`);
+    }
   };
-  return {
-    setpoint: setpointMetrics(responses[0], { horizonS, points, final: final.setpoint }),
-    load: loadMetrics(responses[1], { horizonS, points, final: final.load }),
-  };
+  positive('horizonS', horizonS);
+  positive('sampleTimeS', sampleTimeS);
+  positive('tolerance', tolerance);
+  positive('actuator.slew', actuator.slew);
+  positive('actuator.trackingTimeS', actuator.trackingTimeS);
+  if (!(Number.isInteger(points) && points >= 2)) {
+    throw new RangeError(`points must be a whole number from 2 on, got ${points}`);
+  }
+  if (!(plant.deadTimeS >= 0 && plant.deadTimeS < Infinity)) {
+    throw new RangeError(`plant.deadTimeS must be 0 or more, got ${plant.deadTimeS}`);
+  }
+  if (!(Number.isFinite(controller.kp) && controller.kp !== 0)) {
+    throw new RangeError(`controller.kp must be a number other than 0, got ${controller.kp}`);
+  }
+  if ((actuator.low ?? -Infinity) >= (actuator.high ?? Infinity)) {
+    throw new RangeError(
+      `actuator.low must be below actuator.high, got ${actuator.low} and ${actuator.high}`,
+    );
+  }
 }

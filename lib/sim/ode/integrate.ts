@@ -11,6 +11,8 @@ export interface IntegrationSettings {
   readonly end: number;
   readonly delay: number;
   readonly tolerance: number;
+  /** How far a limit is overstepped before it takes hold or lets go, relative to its size. */
+  readonly margin: number;
   readonly budget: number;
   /** By how many orders a jump of the controller output is smoothed on its way through plant and filter. */
   readonly smoothing: number;
@@ -27,11 +29,11 @@ export function integrateContinuous(
   equations: LoopEquations,
   settings: IntegrationSettings,
 ): Result<Solution, IntegrationRefusal> {
-  const { end, delay, smoothing, tolerance } = settings;
+  const { end, delay, smoothing, margin } = settings;
   const stepper = new Stepper(equations, { ...settings, longestStep: delay });
   const history = new DelayedInput(stepper.solution, delay, equations.excitation.load);
   const breaks = new Breaks(delay, smoothing, end);
-  const limits = equations.limited ? new Limits(equations, stepper, history, tolerance) : null;
+  const limits = equations.limited ? new Limits(equations, stepper, history, margin) : null;
   const inputAt = (x: number): number => history.at(x);
   const output = (): number => equations.output;
   const stopWithin = (from: number, to: number, resolveAt: (x: number) => ArrayLike<number>): number => {

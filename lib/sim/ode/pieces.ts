@@ -81,8 +81,9 @@ export class Solution {
   readonly to: number[] = [];
   readonly y = new Signal();
   readonly output = new Signal();
-  /** Largest |y| at the Chebyshev points. */
+  /** Largest size of y and of the output at the Chebyshev points. */
   peak = 0;
+  outputPeak = 0;
 
   get count(): number {
     return this.from.length;
@@ -93,7 +94,10 @@ export class Solution {
     this.to.push(to);
     this.y.append(y);
     this.output.append(output);
-    for (let j = 0; j < NODES; j += 1) this.peak = Math.max(this.peak, Math.abs(y[j]));
+    for (let j = 0; j < NODES; j += 1) {
+      this.peak = Math.max(this.peak, Math.abs(y[j]));
+      this.outputPeak = Math.max(this.outputPeak, Math.abs(output[j]));
+    }
   }
 
   /** Place of time x in piece `index` as ξ from −1 to 1. */

@@ -1,0 +1,23 @@
+import type { Metadata } from 'next';
+import { PasswordForm } from '@/components/forms/password-form';
+import { PageHead } from '@/components/ui/section';
+import { requireSession } from '@/lib/auth/gate';
+
+export const metadata: Metadata = { title: 'Account' };
+
+export default async function AccountPage() {
+  const { person, roles, organisation } = await requireSession();
+  return (
+    <>
+      <PageHead path={organisation.name} title={person.name} />
+      <p className="pt-4 text-soft">
+        {person.email}, {roles.join(', ')}
+      </p>
+      <h2 className="mt-6 text-lg">Change the password</h2>
+      <p className="mt-1 text-soft">
+        It ends every session of yours, this one too; sign in again with the new one.
+      </p>
+      <PasswordForm />
+    </>
+  );
+}

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { idealController, type IdealController, type Plant } from '../../lib/control/types';
-import { sampleAt } from '../../lib/sim/ode/sample';
+import { sampleAt } from '../support/sample-ode';
 import { solveLoop, type OdeOptions } from '../../lib/sim/ode/solve-loop';
 
 /** Every expectation here is a closed-form solution of the loop's equations, derived beside it. */

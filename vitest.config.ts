@@ -9,8 +9,18 @@ export default defineConfig({
   resolve: { alias },
   test: {
     projects: [
-      { resolve: { alias }, test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}', 'tests/property/**/*.test.ts'], testTimeout: 60_000 } },
-      { resolve: { alias }, test: { name: 'reference', include: ['tests/reference/**/*.test.ts'], testTimeout: 120_000 } },
+      {
+        resolve: { alias },
+        test: {
+          name: 'unit',
+          include: ['tests/unit/**/*.test.{ts,tsx}', 'tests/property/**/*.test.ts'],
+          testTimeout: 60_000,
+        },
+      },
+      {
+        resolve: { alias },
+        test: { name: 'reference', include: ['tests/reference/**/*.test.ts'], testTimeout: 120_000 },
+      },
       {
         resolve: { alias },
         test: {

@@ -23,6 +23,18 @@ function span(props: CurveChartProps): [number, number] {
   return low < high ? [low, high] : props.logX ? [0.1, 10] : [0, 1];
 }
 
+/** The lowest value of all curves; 0 when none falls below zero by more than a hair of their height. */
+function lowest(props: CurveChartProps): number {
+  let low = Infinity;
+  let high = -Infinity;
+  for (const { y } of props.curves)
+    for (let i = 0; i < y.length; i += 1) {
+      low = Math.min(low, y[i]);
+      high = Math.max(high, y[i]);
+    }
+  return low > -0.005 * (high - low) ? Math.max(0, low) : low;
+}
+
 /** Curves first, so that their indices are those of the end labels; the level lines follow. */
 export function curveData(props: CurveChartProps, colours: ChartColours): ChartData<'line', Point[]> {
   const [low, high] = span(props);
@@ -88,10 +100,12 @@ export function curveOptions(props: CurveChartProps, colours: ChartColours): Cha
         ticks: { ...ticks, maxTicksLimit: 6, includeBounds: false, callback: format },
         border: { color: colours.soft },
       };
+  const low0 = lowest(props);
   const yAxis = {
     type: 'linear',
     grid,
-    min: props.yRange?.min,
+    // A response that stays above zero stands on the axis.
+    min: props.yRange?.min ?? (low0 >= 0 ? 0 : undefined),
     max: props.yRange?.max,
     ticks: { ...ticks, maxTicksLimit: 6, stepSize: props.yRange?.step, callback: format },
     border: { color: colours.soft },

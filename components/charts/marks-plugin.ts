@@ -42,6 +42,7 @@ function drawEndLabels(chart: Chart, options: MarksOptions) {
 function drawMarks(chart: Chart, options: MarksOptions) {
   const { ctx, chartArea, scales } = chart;
   ctx.font = options.font;
+  const taken: { left: number; right: number; y: number }[] = [];
   for (const mark of options.marks) {
     const x = scales.x.getPixelForValue(mark.x);
     const y = scales[mark.yAxis ?? 'y'].getPixelForValue(mark.y);
@@ -61,7 +62,13 @@ function drawMarks(chart: Chart, options: MarksOptions) {
     ctx.stroke();
     const width = ctx.measureText(mark.text).width;
     const left = x + 8 + width > chartArea.right ? x - 8 - width : x + 8;
-    const top = y - 9 < chartArea.top + 6 ? y + 13 : y - 9;
+    const above = y - 9 < chartArea.top + 6 ? y + 13 : y - 9;
+    // Two marks close together: the later one is named below its ring.
+    const crowded = taken.some(
+      (box) => left < box.right && left + width > box.left && Math.abs(above - box.y) < 14,
+    );
+    const top = crowded ? y + 14 : above;
+    taken.push({ left, right: left + width, y: top });
     ctx.textAlign = 'left';
     ctx.textBaseline = 'middle';
     ctx.lineWidth = 4;

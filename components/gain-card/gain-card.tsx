@@ -24,10 +24,10 @@ export function GainCard({
         <div
           key={row.name}
           data-gain={row.name}
-          className="grid grid-cols-[minmax(112px,auto)_1fr] items-baseline gap-x-3 border-b border-hair px-3.5 py-2 last:border-b-0 sm:grid-cols-[minmax(124px,auto)_1fr_auto]"
+          className="grid grid-cols-[minmax(112px,auto)_1fr] items-baseline gap-x-3 border-b border-hair px-3.5 py-2 last:border-b-0 sm:grid-cols-[minmax(112px,auto)_auto_1fr]"
         >
           <span>{row.label}</span>
-          <span className="font-mono text-xl font-semibold break-all">{row.text}</span>
+          <span className="font-mono text-xl font-semibold">{row.text}</span>
           <span className="col-span-2 text-sm text-soft sm:col-span-1 sm:text-right">
             {row.isOff && row.off ? row.off : `${row.unit ? `${row.unit} · ` : ''}${row.direction}`}
           </span>

@@ -50,6 +50,24 @@ export function VerdictNotice({ preview }: { preview: Preview | null }) {
   );
 }
 
+/** The verdict in one line, for the foot of a small screen. */
+export function VerdictLine({ preview }: { preview: Preview | null }) {
+  const unstable = preview?.cases.some(({ check }) => check && !check.stable) ?? false;
+  const verdict = preview?.verdict?.verdict;
+  if (unstable) return <Notice tone="bad" title="Unstable loop" />;
+  if (!verdict || verdict.pass === null)
+    return <Notice tone="plain" title={verdict ? 'Stable, no limit stated' : 'Nothing to check yet'} />;
+  const held = verdict.items.filter(({ pass }) => pass).length;
+  return (
+    <Notice
+      tone={verdict.pass ? 'good' : 'bad'}
+      title={verdict.pass ? 'Requirement met' : 'Requirement not met'}
+    >
+      {held} of {verdict.items.length} limits held
+    </Notice>
+  );
+}
+
 function checkNote(preview: Preview | null, verdict: LoadCaseVerdict | null | undefined): string {
   if (!preview || preview.cases.length < 2 || !verdict) return 'linear model, exact dead time';
   return `worst of ${preview.cases.length} load cases: ${verdict.worst.name}`;

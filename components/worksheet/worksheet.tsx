@@ -4,7 +4,7 @@ import { useRouter } from 'next/navigation';
 import { useMemo, useReducer, useState } from 'react';
 import { toDevice } from '@/lib/control/forms';
 import { Notice } from '../ui/notice';
-import { CheckSection, VerdictNotice } from './check-section';
+import { CheckSection, VerdictLine } from './check-section';
 import { GainsSection } from './gains-section';
 import { HandOverDialog } from './hand-over-dialog';
 import { HandOverSection } from './hand-over-section';
@@ -104,7 +104,7 @@ export function Worksheet({ axis }: { axis: WorksheetAxis }) {
         </div>
       </div>
       <div className="sticky bottom-0 z-10 -mx-4 border-t border-ink bg-paper xl:hidden">
-        <VerdictNotice preview={preview} />
+        <VerdictLine preview={preview} />
       </div>
       <KeepDialog
         open={dialog === 'keep'}

@@ -58,7 +58,7 @@ export const BRACKWATER: readonly DemoMachine[] = [
           outputSpan: 100,
           decimals: 2,
         },
-        requirement: { overshootMax: 15, phaseMarginMin: 50, msMax: 1.8, loadRecoveryMax: 260 },
+        requirement: { overshootMax: 15, phaseMarginMin: 50, msMax: 1.8, loadRecoveryMax: 560 },
         loadCases: [{ name: 'nominal', text: '2.1 e^(-14s)/((140s+1)(22s+1))' }],
         versions: [
           {

@@ -1,0 +1,46 @@
+import { createHash } from 'node:crypto';
+import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { command, root } from './processes.mjs';
+import { say, Sentence } from './say.mjs';
+
+const SOURCES = [
+  'app',
+  'components',
+  'db',
+  'lib',
+  'public',
+  'package-lock.json',
+  'next.config.mjs',
+  'postcss.config.mjs',
+  'tailwind.config.ts',
+  'tsconfig.json',
+];
+const stampFile = join(root, '.next', 'fettle-stamp');
+
+function filesUnder(path) {
+  if (!statSync(path).isDirectory()) return [path];
+  return readdirSync(path)
+    .sort()
+    .flatMap((name) => filesUnder(join(path, name)));
+}
+
+function sourceHash() {
+  const hash = createHash('sha256');
+  for (const source of SOURCES)
+    for (const file of filesUnder(join(root, source)))
+      hash.update(file.slice(root.length)).update(readFileSync(file));
+  return hash.digest('hex');
+}
+
+/** Builds the app when the last build is of other sources. */
+export async function build() {
+  const wanted = sourceHash();
+  if (existsSync(stampFile) && readFileSync(stampFile, 'utf8') === wanted) return;
+  say('Building …');
+  const next = join(root, 'node_modules', 'next', 'dist', 'bin', 'next');
+  const env = { ...process.env, NEXT_TELEMETRY_DISABLED: '1' };
+  const { code, output } = await command(process.execPath, [next, 'build'], { quiet: true, env });
+  if (code !== 0) throw new Sentence(`The build failed:\n${output.trim().split('\n').slice(-30).join('\n')}`);
+  writeFileSync(stampFile, wanted);
+}

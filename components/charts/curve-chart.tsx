@@ -10,37 +10,12 @@ import {
   type ChartConfiguration,
 } from 'chart.js';
 import { useEffect, useRef, useSyncExternalStore } from 'react';
-import { resolveColours, type CurveTone } from './colours';
+import { resolveColours } from './colours';
 import { curveData, curveOptions } from './curve-config';
-import { marksPlugin, type ChartMark } from './marks-plugin';
+import { marksPlugin } from './marks-plugin';
+import type { CurveChartProps } from './types';
 
 Chart.register(LineController, LineElement, PointElement, LinearScale, LogarithmicScale, marksPlugin);
-
-export interface Curve {
-  label: string;
-  x: ArrayLike<number>;
-  y: ArrayLike<number>;
-  tone: CurveTone;
-  /** Line pattern; curves differ by it and by the label at their end, never by colour alone. */
-  dash?: readonly number[];
-  /** `y2` draws on the right-hand scale. */
-  axis?: 'y' | 'y2';
-}
-
-export interface CurveChartProps {
-  title: string;
-  unit: string;
-  xUnit: string;
-  curves: readonly Curve[];
-  marks?: readonly ChartMark[];
-  logX?: boolean;
-  /** Horizontal lines across the plot, e.g. the set-point. */
-  levels?: readonly number[];
-  yRange?: { min: number; max: number; step?: number };
-  /** What the picture shows, in words with its numbers. */
-  description: string;
-  height?: number;
-}
 
 const DARK = '(prefers-color-scheme: dark)';
 

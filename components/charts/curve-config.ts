@@ -1,7 +1,7 @@
 import type { ChartData, ChartOptions, ScaleOptionsByType } from 'chart.js';
 import { formatNumber } from '@/lib/units';
 import type { ChartColours } from './colours';
-import type { CurveChartProps } from './curve-chart';
+import type { CurveChartProps } from './types';
 
 const FONT = "12px 'Atkinson Hyperlegible Next Variable', sans-serif";
 const FAMILY = "'Atkinson Hyperlegible Next Variable', sans-serif";

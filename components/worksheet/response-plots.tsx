@@ -1,6 +1,7 @@
 'use client';
 
-import { CurveChart, type Curve } from '../charts/curve-chart';
+import { CurveChart } from '../charts/curve-chart';
+import type { Curve } from '../charts/types';
 import { timeScale } from '../charts/time-scale';
 import type { AxisUnits } from '@/lib/control/forms';
 import type { LoopCheck } from '@/lib/sim/types';

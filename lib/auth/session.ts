@@ -4,21 +4,14 @@ import { cookies } from 'next/headers';
 import { cache } from 'react';
 import { withSystem } from '../../db/tx';
 import { memberships, organisations, persons, sessions } from '../../db/schema';
-import type { Role } from '../change';
 import { appUrl, environment } from '../env';
-import { mintScope, type Scope } from './scope';
+import { mintScope } from './scope';
+import type { Session } from './session-type';
 import { sessionFromBearer } from './tokens';
 
-export const SESSION_HOURS = 12;
+export type { Session } from './session-type';
 
-export interface Session {
-  /** Null for a bearer token. */
-  readonly sessionId: string | null;
-  readonly person: { readonly id: string; readonly name: string; readonly email: string };
-  readonly organisation: { readonly id: string; readonly name: string; readonly onePersonShop: boolean };
-  readonly roles: readonly Role[];
-  readonly scope: Scope;
-}
+export const SESSION_HOURS = 12;
 
 interface Sealed {
   sessionId?: string;

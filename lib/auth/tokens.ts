@@ -3,7 +3,7 @@ import { and, eq, gt, isNull } from 'drizzle-orm';
 import { withSystem } from '../../db/tx';
 import { apiTokens, memberships, organisations, persons } from '../../db/schema';
 import { mintScope } from './scope';
-import type { Session } from './session';
+import type { Session } from './session-type';
 
 const PREFIX = 'fettle_';
 

@@ -11,11 +11,6 @@ export function trimmed(p: Polynomial): number[] {
   return p.length === 0 ? [0] : p.slice(first);
 }
 
-/** Degree after trimming; the zero polynomial has degree 0 here. */
-export function degree(p: Polynomial): number {
-  return trimmed(p).length - 1;
-}
-
 export function isZero(p: Polynomial): boolean {
   return p.every((c) => c === 0);
 }

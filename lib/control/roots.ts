@@ -1,12 +1,10 @@
 import { aberth } from './roots/aberth';
 import { mergeClusters } from './roots/clusters';
 import { pairConjugates } from './roots/conjugates';
+import type { ComplexNumber } from './roots/complex';
 import { trimmed, type Polynomial } from './polynomial';
 
-export interface ComplexNumber {
-  readonly re: number;
-  readonly im: number;
-}
+export type { ComplexNumber } from './roots/complex';
 
 /**
  * All complex roots of a real polynomial, with multiplicity.

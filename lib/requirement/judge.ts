@@ -92,7 +92,7 @@ export function roomOf(item: VerdictItem): number {
 }
 
 /** A figure in the unit of its limit; quantities of the axis stand bare, their unit belongs to the axis. */
-export function formatLimit(unit: RequirementUnit, value: number): string {
+function formatLimit(unit: RequirementUnit, value: number): string {
   switch (unit) {
     case 'percent':
       return formatQuantity(value, '%', { significant: 3 });

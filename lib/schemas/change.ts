@@ -20,7 +20,6 @@ const content = z.object({
 export const createChangeInput = content.extend({ axisId: z.uuid(), gainSetId: z.uuid() });
 export const updateChangeInput = content.extend({ rowVersion: z.int().min(1) });
 
-export const emptyInput = z.object({});
 export const approveInput = z.object({
   password: z.string().min(1, 'Type your password to sign.').max(1000),
 });
@@ -49,5 +48,4 @@ export const verifyInput = z.object({
 
 export const rollBackInput = z.object({ reason: remark, asLeft: values });
 
-export type CreateChangeInput = z.output<typeof createChangeInput>;
 export type ApplyInput = z.output<typeof applyInput>;

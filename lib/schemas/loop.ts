@@ -15,10 +15,6 @@ const coefficients = z
   .min(1, 'Give at least one coefficient.')
   .max(41, 'Too many coefficients.');
 
-export const numberOrInf = z
-  .union([z.number(), z.literal('inf')])
-  .transform((value) => (value === 'inf' ? Infinity : value));
-
 /** A plant by its coefficients in descending powers, or as a text in any accepted notation. */
 export const plantShape = z
   .union(
@@ -43,7 +39,7 @@ export const plantShape = z
 /** The controller in the ideal form; ti "inf" = no integral, td 0 = no derivative. */
 export const controllerShape = z
   .object({
-    kp: finite,
+    kp: finite.refine((kp) => kp !== 0, 'The gain must not be 0: such a controller does nothing.'),
     ti: z.union([positive, z.literal('inf')]).optional(),
     td: notNegative.optional(),
     n: positive.optional(),

@@ -1,5 +1,6 @@
 import type { Metadata } from 'next';
 import { PasswordForm } from '@/components/forms/password-form';
+import { TokenForm } from '@/components/forms/token-form';
 import { PageHead } from '@/components/ui/section';
 import { requireSession } from '@/lib/auth/gate';
 
@@ -18,6 +19,11 @@ export default async function AccountPage() {
         It ends every session of yours, this one too; sign in again with the new one.
       </p>
       <PasswordForm />
+      <h2 className="mt-8 text-lg">Make a token for the API</h2>
+      <p className="mt-1 text-soft">
+        Send it as Authorization: Bearer. It can do what its one role can, for you.
+      </p>
+      <TokenForm roles={roles} />
     </>
   );
 }

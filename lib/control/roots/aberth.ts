@@ -1,4 +1,4 @@
-import type { ComplexNumber } from '../roots';
+import type { ComplexNumber } from './complex';
 
 const EPSILON = Number.EPSILON;
 const MAX_SWEEPS = 120;

@@ -1,5 +1,5 @@
 import { derivative, evaluateComplex } from '../polynomial';
-import type { ComplexNumber } from '../roots';
+import type { ComplexNumber } from './complex';
 
 const RADII = [0.2, 0.1, 0.05, 0.02, 1e-2, 1e-3, 1e-4, 1e-5, 1e-6, 1e-7];
 

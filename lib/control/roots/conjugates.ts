@@ -1,4 +1,4 @@
-import type { ComplexNumber } from '../roots';
+import type { ComplexNumber } from './complex';
 import { rootError } from './error-bound';
 
 /**

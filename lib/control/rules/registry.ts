@@ -44,8 +44,6 @@ export type Rule = RuleFacts<RuleId>;
 /** The published tuning rules with what a reader needs to choose one. */
 export const RULES: readonly Rule[] = DEFINITIONS.map(factsOf);
 
-export const RULE_IDS: readonly RuleId[] = DEFINITIONS.map(({ id }) => id);
-
 /** The rule of an id, with its rows; null when there is none. */
 export function findRule(id: string): RuleDefinition<RuleId> | null {
   return DEFINITIONS.find((rule) => rule.id === id) ?? null;

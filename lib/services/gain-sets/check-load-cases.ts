@@ -2,8 +2,8 @@ import type { KeptCheck } from '../../../db/schema';
 import type { Actuator, IdealController } from '../../control/types';
 import { judgeLoadCases, type Requirement, type Verdict } from '../../requirement';
 import type { LoadCaseInput } from '../../schemas/loop';
-import { checkLoop } from '../../sim/check';
-import { simulateOde } from '../../sim/ode';
+import { checkLoop, type Engine } from '../../sim/check';
+import { trySimulateOde } from '../../sim/ode';
 import type { LoopCheck } from '../../sim/types';
 
 export interface LoadCaseChecks {
@@ -19,6 +19,12 @@ export interface CheckSettings {
   readonly points?: number;
 }
 
+/** The adaptive solver as second engine; null when it can't follow the loop in reasonable time. */
+const secondEngine: Engine = (plant, controller, options) => {
+  const solved = trySimulateOde(plant, controller, options);
+  return solved.ok ? solved.value : null;
+};
+
 /** Every load case checked with both engines, and the verdict over all of them: the worst decides. */
 export function checkLoadCases(
   cases: readonly LoadCaseInput[],
@@ -28,7 +34,7 @@ export function checkLoadCases(
 ): LoadCaseChecks {
   const checks = cases.map(({ name, plant }) => ({
     name,
-    check: checkLoop(plant.plant, controller, { ...settings, secondEngine: simulateOde }),
+    check: checkLoop(plant.plant, controller, { ...settings, secondEngine }),
   }));
   const { worst, verdict } = judgeLoadCases(requirement, checks);
   return { checks, worst, verdict };

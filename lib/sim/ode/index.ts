@@ -15,8 +15,6 @@ export interface OdeResponses {
 }
 
 const DEFAULT_POINTS = 600;
-/** An output this close to a limit, relative to it, rests on it. */
-const AT_LIMIT = 1e-9;
 
 /** The engine could not finish: the loop grows without bound, or has parts too fast for its horizon. */
 export class OdeRefused extends RangeError {

@@ -65,7 +65,8 @@ export function refusalOf(
   if (stepper.overBudget) {
     return refuse(
       'ODE_TOO_COSTLY',
-      `The loop has parts too fast for its horizon: more than ${budget} evaluations of its equations are needed.`,
+      'The dead time, a filter or a lag is so short against the horizon that the step-by-step solver would need more ' +
+        `than ${budget} evaluations; a shorter horizon brings the loop within its reach.`,
     );
   }
   return null;

@@ -9,7 +9,7 @@ export interface StepperSettings {
   readonly longestStep: number;
   /** Error of one step, in units of the signal scale. */
   readonly tolerance: number;
-  /** Largest number of evaluations of the equations. */
+  /** Most work, in evaluations of the equations. */
   readonly budget: number;
 }
 
@@ -25,6 +25,9 @@ export interface Run {
 /** A response above this times the signal scale has left every useful range; an unstable loop gets there. */
 const DIVERGED_ABOVE = 1e12;
 
+/** Copying a step costs about as much as this many evaluations. */
+const STEP_WORK = 20;
+
 /** Relative length of a run below which it is passed over. */
 const ROUNDING = 4e-15;
 
@@ -35,7 +38,7 @@ export class Stepper {
   readonly solution = new Solution();
   state: number[];
   x = 0;
-  private evaluations = 0;
+  private work = 0;
   private readonly solver: Solver;
   private readonly standstill: number[];
   private readonly nodeState: number[];
@@ -63,7 +66,7 @@ export class Stepper {
   }
 
   get overBudget(): boolean {
-    return this.evaluations > this.settings.budget;
+    return this.work > this.settings.budget;
   }
 
   get diverged(): boolean {
@@ -79,7 +82,7 @@ export class Stepper {
     }
     this.solver.solve(
       (x, state) => {
-        this.evaluations += 1;
+        this.work += 1;
         // Beyond the budget the solver is led to its next accepted step, where the run ends.
         return this.overBudget ? this.standstill : this.equations.derivative(state, run.inputAt(x));
       },
@@ -96,6 +99,7 @@ export class Stepper {
 
   private keepStep(run: Run, from: number, to: number, state: number[], dense: DenseOutput): boolean {
     const { equations, solution } = this;
+    this.work += STEP_WORK;
     const resolveAt = (x: number): number[] => {
       for (const index of equations.visible) this.nodeState[index] = dense(index, x);
       equations.resolve(this.nodeState, run.inputAt(x));

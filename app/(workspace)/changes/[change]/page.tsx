@@ -14,6 +14,7 @@ import { PageHead } from '@/components/ui/section';
 import { getChange, type ChangeRecord } from '@/db/queries/changes';
 import { listPeople } from '@/db/queries/people';
 import { withScope } from '@/db/tx';
+import { verifyChangeEvents } from '@/lib/audit/verify';
 import { requireSession } from '@/lib/auth/gate';
 import { permittedActions, signatureMeaning } from '@/lib/change';
 import { isId } from '@/lib/ids';
@@ -54,8 +55,9 @@ function Words({ record }: { record: ChangeRecord }) {
 export default async function ChangePage({ params }: { params: Promise<{ change: string }> }) {
   const { scope, roles, person, organisation } = await requireSession();
   const { change: id } = await params;
-  const { record, technicians } = await withScope(scope, async (tx) => ({
+  const { record, technicians, chain } = await withScope(scope, async (tx) => ({
     record: isId(id) ? await getChange(tx, scope, { id }) : null,
+    chain: isId(id) ? await verifyChangeEvents(tx, scope, id) : null,
     technicians: await listPeople(tx, scope, { role: 'technician' }),
   }));
   if (!record) notFound();
@@ -119,6 +121,13 @@ export default async function ChangePage({ params }: { params: Promise<{ change:
           />
           <h2 className="mt-8 mb-1 text-lg">Steps so far</h2>
           <EventList events={events} />
+          {chain ? (
+            <p className={`mt-2 text-sm ${chain.intact ? 'text-soft' : 'font-semibold text-brick'}`}>
+              {chain.intact
+                ? 'Every step is bound to those before it; the chain is whole.'
+                : `✕ The chain is broken at step ${chain.firstBroken}.`}
+            </p>
+          ) : null}
           {onePersonShop ? (
             <p className="mt-3 text-sm">
               This organisation is a one-person shop: author and approver may be the same.

@@ -1,0 +1,4 @@
+export interface ComplexNumber {
+  readonly re: number;
+  readonly im: number;
+}

@@ -1,7 +1,7 @@
 import type { IdealController, Margins, Plant } from '../control/types';
-import { respond } from './exact';
-import { closedLoopPoles } from './exact/without-dead-time';
-import { finalValues } from './final-values';
+import { closedLoopPoles } from './exact/linear-loop';
+import { linearResponses, type ResponseSource } from './exact/linear-responses';
+import { finalValues, type FinalValues } from './final-values';
 import { settledAfter } from './metrics';
 
 export interface Horizon {
@@ -52,19 +52,19 @@ function bounds(
  * A horizon that shows both responses of a stable linear loop at rest: they stay within 0.5 % for its last fifth; at
  * least 4 dead times, at most 200 closed-loop time constants. `settled` is false when that is not long enough.
  */
-export function automaticHorizon(plant: Plant, controller: IdealController, margins: Margins): Horizon {
+export function automaticHorizon(
+  plant: Plant,
+  controller: IdealController,
+  margins: Margins,
+  source: ResponseSource = linearResponses(plant, controller),
+  final: FinalValues = finalValues(plant, controller),
+): Horizon {
   const { first, most } = bounds(plant, controller, margins);
-  const final = finalValues(plant, controller);
   const least = LEAST_DEAD_TIMES * plant.deadTimeS;
   let horizonS = Math.max(first, least);
   for (let i = 0; i < DOUBLINGS; i += 1) {
-    const setpoint = settledAfter(
-      respond(plant, controller, 'setpoint', horizonS),
-      final.setpoint,
-      REST,
-      'final',
-    );
-    const load = settledAfter(respond(plant, controller, 'load', horizonS), final.load, REST, 'peak');
+    const setpoint = settledAfter(source.upTo('setpoint', horizonS), final.setpoint, REST, 'final');
+    const load = settledAfter(source.upTo('load', horizonS), final.load, REST, 'peak');
     if (setpoint !== null && load !== null) {
       const needed = Math.max(setpoint, load) / SHOWN;
       if (needed <= horizonS)

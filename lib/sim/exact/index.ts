@@ -1,9 +1,8 @@
 import type { IdealController, Plant } from '../../control/types';
 import { finalValues } from '../final-values';
-import { loadMetrics, setpointMetrics, type Trajectory } from '../metrics';
 import type { LoadResponse, SetpointResponse } from '../types';
-import { respondWithDeadTime } from './with-dead-time';
-import { respondWithoutDeadTime, type StepKind } from './without-dead-time';
+import { responseFigures } from './figures';
+import { linearResponses } from './linear-responses';
 
 export interface SimulationOptions {
   /** Length of the responses, s, > 0. */
@@ -13,18 +12,6 @@ export interface SimulationOptions {
 }
 
 const DEFAULT_POINTS = 600;
-
-/** One response of the linear loop as pieces. */
-export function respond(
-  plant: Plant,
-  controller: IdealController,
-  kind: StepKind,
-  horizonS: number,
-): Trajectory {
-  return plant.deadTimeS > 0
-    ? respondWithDeadTime(plant, controller, kind, horizonS)
-    : respondWithoutDeadTime(plant, controller, kind, horizonS);
-}
 
 /**
  * Set-point and load response of a stable linear loop by exact stepping: the matrix exponential over each step, and
@@ -44,13 +31,10 @@ export function simulateExact(
     throw new RangeError(`horizonS must be above 0 s and finite, got ${horizonS}`);
   if (!(Number.isInteger(points) && points >= 2))
     throw new RangeError(`points must be a whole number from 2 on, got ${points}`);
-  const final = finalValues(plant, controller);
-  return {
-    setpoint: setpointMetrics(respond(plant, controller, 'setpoint', horizonS), {
-      horizonS,
-      points,
-      final: final.setpoint,
-    }),
-    load: loadMetrics(respond(plant, controller, 'load', horizonS), { horizonS, points, final: final.load }),
-  };
+  return responseFigures(
+    linearResponses(plant, controller),
+    finalValues(plant, controller),
+    horizonS,
+    points,
+  );
 }

@@ -17,7 +17,7 @@ export interface OdeOptions {
   readonly sampleTimeS?: number;
   /** Error of one step relative to the size of the response; 1e-8 if not given. */
   readonly tolerance?: number;
-  /** Most work for one response, in evaluations of the equations; 1 million (one or two seconds) if not given. */
+  /** Most work for one response, in evaluations of the equations; 2 million (some seconds) if not given. */
   readonly budget?: number;
 }
 
@@ -33,7 +33,7 @@ export interface SolvedResponse {
 export const END = 1000;
 
 const DEFAULT_TOLERANCE = 1e-8;
-const DEFAULT_BUDGET = 1e6;
+const DEFAULT_BUDGET = 2e6;
 /** A response smaller than this part of the assumed size is computed again with its own size as scale. */
 const TOO_SMALL = 0.02;
 

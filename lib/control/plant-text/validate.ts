@@ -4,6 +4,10 @@ import { roots } from '../roots';
 import type { Plant } from '../types';
 import { HIGHEST_ORDER, type TextResult } from './types';
 
+/** Sizes beyond these have no meaning for a plant in any unit, and would overflow on the way. */
+const LARGEST = 1e40;
+const SMALLEST = 1e-40;
+
 /**
  * Judges coefficients as a plant: finite, not zero, proper, order up to 20, dead time not negative.
  *
@@ -20,6 +24,14 @@ export function validatePlant(
     return refuse('EMPTY', 'Numerator and denominator need a coefficient each.');
   if (![...num, ...den, deadTimeS].every(Number.isFinite))
     return refuse('NOT_FINITE', 'A coefficient or the dead time is not a finite number.');
+  const extreme = [...num, ...den, deadTimeS].find(
+    (c) => c !== 0 && !(Math.abs(c) >= SMALLEST && Math.abs(c) <= LARGEST),
+  );
+  if (extreme !== undefined)
+    return refuse(
+      'NOT_FINITE',
+      `${extreme} is beyond what can be computed with (${SMALLEST} to ${LARGEST}). Use another unit of time.`,
+    );
   const top = trimmed(num);
   const bottom = trimmed(den);
   if (bottom.every((c) => c === 0)) return refuse('ZERO_DENOMINATOR', 'The denominator is zero.');

@@ -59,6 +59,16 @@ function largestDifference(a: Float64Array, b: Float64Array): { difference: numb
   return { difference, peak };
 }
 
+/** Each dead time and each sample is at least one step: beyond this many nobody waits for the answer. */
+const MOST_STEPS = 1_000_000;
+const TOO_LONG =
+  'The horizon is more than a million dead times or samples long: state a shorter horizon, or leave the dead time out.';
+
+function tooLong(plant: Plant, horizonS: number, sampleTimeS: number | undefined): boolean {
+  const shortest = Math.min(plant.deadTimeS > 0 ? plant.deadTimeS : Infinity, sampleTimeS ?? Infinity);
+  return horizonS > MOST_STEPS * shortest;
+}
+
 /** Largest difference of y between two engines on the same grid, as a share of the peak; the worse of both responses. */
 function agreementOf(a: Responses, b: Responses): number {
   const shares = [largestDifference(a.setpoint.y, b.setpoint.y), largestDifference(a.load.y, b.load.y)].map(
@@ -95,6 +105,8 @@ export function checkLoop(plant: Plant, controller: IdealController, options: Ch
     ? { horizonS: options.horizonS, settled: true }
     : automaticHorizon(plant, controller, margins);
   const slow = settled ? [] : ['The responses do not come to rest within 200 time constants of the loop.'];
+  if (tooLong(plant, horizonS, options.sampleTimeS))
+    return { stable, margins, setpoint: null, load: null, engines: null, warnings: [TOO_LONG] };
   const { actuator, sampleTimeS, points, secondEngine } = options;
   const nonlinear = isLimited(actuator) || sampleTimeS !== undefined;
   if (!nonlinear || !secondEngine) {

@@ -18,6 +18,8 @@ const MOST_TIME_CONSTANTS = 200;
 /** With dead time the slowest mode is not known beforehand: the search may go on longer than its crossover suggests. */
 const SEARCH = 10;
 const LEAST_DEAD_TIMES = 4;
+/** A response is followed over this many dead times by itself; each of them is at least one step. */
+const MOST_DEAD_TIMES = 100_000;
 const DOUBLINGS = 8;
 const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
 
@@ -42,9 +44,10 @@ function bounds(
   const crossover = margins.gainCrossover ?? margins.phaseCrossover;
   const timeConstant = crossover && Number.isFinite(crossover) ? 1 / crossover : plant.deadTimeS;
   const slow = Number.isFinite(controller.ti) ? Math.max(timeConstant, controller.ti / 4) : timeConstant;
+  const followed = MOST_DEAD_TIMES * plant.deadTimeS;
   return {
-    first: Math.max(10 * plant.deadTimeS, 12 * slow),
-    most: SEARCH * MOST_TIME_CONSTANTS * Math.max(slow, plant.deadTimeS),
+    first: Math.min(Math.max(10 * plant.deadTimeS, 12 * slow), followed),
+    most: Math.min(SEARCH * MOST_TIME_CONSTANTS * Math.max(slow, plant.deadTimeS), followed),
   };
 }
 

@@ -1,6 +1,7 @@
 import type { IdealController, Margins, Plant } from '../control/types';
-import { closedLoopPoles } from './exact/linear-loop';
-import { linearResponses, type ResponseSource } from './exact/linear-responses';
+import { roots } from '../control/roots';
+import { characteristic } from './exact/continuous-loop';
+import { continuousResponses, type ResponseSource } from './exact/responses';
 import { finalValues, type FinalValues } from './final-values';
 import { settledAfter } from './metrics';
 
@@ -37,7 +38,7 @@ function bounds(
   margins: Margins,
 ): { first: number; most: number } {
   if (plant.deadTimeS === 0) {
-    const slowest = Math.min(...closedLoopPoles(plant, controller).map(({ re }) => -re));
+    const slowest = Math.min(...roots(characteristic(plant, controller)).map(({ re }) => -re));
     const timeConstant = Number.isFinite(slowest) && slowest > 0 ? 1 / slowest : 1;
     return { first: 8 * timeConstant, most: MOST_TIME_CONSTANTS * timeConstant };
   }
@@ -59,7 +60,7 @@ export function automaticHorizon(
   plant: Plant,
   controller: IdealController,
   margins: Margins,
-  source: ResponseSource = linearResponses(plant, controller),
+  source: ResponseSource = continuousResponses(plant, controller),
   final: FinalValues = finalValues(plant, controller),
 ): Horizon {
   const { first, most } = bounds(plant, controller, margins);

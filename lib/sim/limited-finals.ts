@@ -1,6 +1,6 @@
-import { trimmed } from '../../control/polynomial';
-import type { Actuator, IdealController, Plant } from '../../control/types';
-import { finalValues, type FinalValues } from '../final-values';
+import { trimmed } from '../control/polynomial';
+import type { Actuator, IdealController, Plant } from '../control/types';
+import { finalValues, type FinalValues } from './final-values';
 
 /**
  * Final values of the loop with limits: those of the linear loop where the output that holds them lies within the

@@ -2,7 +2,7 @@ import type { FinalValues } from '../final-values';
 import { loadMetrics, setpointMetrics } from '../metrics';
 import type { LoadResponse, SetpointResponse } from '../types';
 import { cutAt } from './cut-at';
-import type { ResponseSource } from './linear-responses';
+import type { ResponseSource } from './responses';
 
 /** Both responses with their figures; the source has been used up then, its trajectories end at the horizon. */
 export function responseFigures(

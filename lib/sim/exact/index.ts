@@ -1,14 +1,18 @@
-import type { IdealController, Plant } from '../../control/types';
-import { finalValues } from '../final-values';
+import type { Actuator, IdealController, Plant } from '../../control/types';
+import { limitedFinals } from '../limited-finals';
 import type { LoadResponse, SetpointResponse } from '../types';
 import { responseFigures } from './figures';
-import { linearResponses } from './linear-responses';
+import { responsesOf } from './responses';
 
 export interface SimulationOptions {
   /** Length of the responses, s, > 0. */
   readonly horizonS: number;
   /** Points of the curves handed back, ≥ 2; 600 when not given. */
   readonly points?: number;
+  /** Output limits, with back-calculation of the integral. */
+  readonly actuator?: Actuator;
+  /** Given: the controller runs once per this time with zero-order hold, s. */
+  readonly sampleTimeS?: number;
 }
 
 const DEFAULT_POINTS = 600;
@@ -26,15 +30,11 @@ export function simulateExact(
   controller: IdealController,
   options: SimulationOptions,
 ): { setpoint: SetpointResponse; load: LoadResponse } {
-  const { horizonS, points = DEFAULT_POINTS } = options;
+  const { horizonS, points = DEFAULT_POINTS, actuator } = options;
   if (!(horizonS > 0 && horizonS < Infinity))
     throw new RangeError(`horizonS must be above 0 s and finite, got ${horizonS}`);
   if (!(Number.isInteger(points) && points >= 2))
     throw new RangeError(`points must be a whole number from 2 on, got ${points}`);
-  return responseFigures(
-    linearResponses(plant, controller),
-    finalValues(plant, controller),
-    horizonS,
-    points,
-  );
+  const source = responsesOf(plant, controller, options);
+  return responseFigures(source, limitedFinals(plant, controller, actuator), horizonS, points);
 }

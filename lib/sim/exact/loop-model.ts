@@ -10,8 +10,8 @@ export interface Row {
 }
 
 /**
- * The loop cut open at the plant input w, as ż = A z + bw·w + br·r with the plant output y and the controller output u
- * read off the states. Time is in units of timeUnitS; the states are scaled so that A is balanced.
+ * The loop cut open at the plant input w, as ż = A z + bw·w + br·r with the signals read off
+ * the states. Time is in units of timeUnitS; the states are scaled so that A is balanced.
  */
 export interface LoopModel {
   readonly n: number;
@@ -19,8 +19,13 @@ export interface LoopModel {
   readonly a: Float64Array;
   readonly bw: Float64Array;
   readonly br: Float64Array;
+  /** Direction of the integral's state; zero without integral. */
+  readonly integral: Float64Array;
   readonly y: Row;
-  readonly u: Row;
+  /** y behind the measurement filter. */
+  readonly measured: Row;
+  /** The controller output before its limits. */
+  readonly v: Row;
 }
 
 /** The plant in observer form in the time unit: y is its first state plus direct·w. */
@@ -126,41 +131,12 @@ export function loopModel(plant: Plant, controller: IdealController, fallbackTim
     addRow(uz, parts, measured, -kp * derivativeRatio);
     addRow(uz, parts, unit(lagAt), -kp * derivativeRatio);
   }
-  return { n, timeUnitS, a, bw, br, y, u: { z: uz, ...parts } };
+  const integral = new Float64Array(n);
+  if (hasIntegral) integral[integralAt] = 1;
+  return { n, timeUnitS, a, bw, br, integral, y, measured, v: { z: uz, ...parts } };
 }
 
-/** The loop closed without dead time, w = u + load: ż = A z + br·r + bl·load. */
-export interface ClosedModel {
-  readonly n: number;
-  readonly a: Float64Array;
-  readonly br: Float64Array;
-  readonly bl: Float64Array;
-  /** w = wz·z + wr·r + wl·load. */
-  readonly wz: Float64Array;
-  readonly wr: number;
-  readonly wl: number;
-}
-
-/** Closes the loop; a direct path through plant and controller makes an algebraic loop, solved here. */
-export function closedModel(model: LoopModel): ClosedModel {
-  const { n, a, bw, br, u } = model;
-  const gain = 1 / (1 - u.w);
-  const wz = u.z.map((value) => value * gain);
-  const wr = u.r * gain;
-  const closed = new Float64Array(a);
-  for (let i = 0; i < n; i += 1) for (let j = 0; j < n; j += 1) closed[i * n + j] += bw[i] * wz[j];
-  return {
-    n,
-    a: closed,
-    br: br.map((value, i) => value + bw[i] * wr),
-    bl: bw.map((value) => value * gain),
-    wz,
-    wr,
-    wl: gain,
-  };
-}
-
-/** Scales the states of a model by powers of two so that its matrix is balanced; signals stay what they are. */
+/** Scales the states of a model by powers of two so that a matrix is balanced; signals stay what they are. */
 export function balanced(model: LoopModel, matrix: Float64Array): LoopModel {
   const { n } = model;
   const d = balancing(matrix, n);
@@ -169,5 +145,14 @@ export function balanced(model: LoopModel, matrix: Float64Array): LoopModel {
     for (let j = 0; j < n; j += 1) a[i * n + j] = (model.a[i * n + j] * d[j]) / d[i];
   const down = (values: Float64Array) => values.map((value, i) => value / d[i]);
   const up = (row: Row): Row => ({ ...row, z: row.z.map((value, i) => value * d[i]) });
-  return { ...model, a, bw: down(model.bw), br: down(model.br), y: up(model.y), u: up(model.u) };
+  return {
+    ...model,
+    a,
+    bw: down(model.bw),
+    br: down(model.br),
+    integral: down(model.integral),
+    y: up(model.y),
+    measured: up(model.measured),
+    v: up(model.v),
+  };
 }

@@ -1,67 +1,56 @@
-import type { ClosedModel, LoopModel, Row } from './loop-model';
-
-/** A signal read off the loop: Σ z[i]·zᵢ + w·w + one. */
+/** A signal read off a system: Σ z[i]·zᵢ + w·w + ones[k], k the constant input in use. */
 export interface Reading {
   readonly z: Float64Array;
   readonly w: number;
-  readonly one: number;
+  readonly ones: readonly number[];
 }
 
 /**
- * What a run steps through: ż = A z + bw·w + e with two signals read off it, in units of timeUnitS. w is what reaches
- * the plant after the dead time; e is constant.
+ * What a run steps through: ż = A z + bw·w + e in units of timeUnitS, with the signals read off it. w is what reaches
+ * the plant after the dead time; e is one of several constant inputs (set-point, load, an output at its limit).
  */
 export interface StateSpace {
   readonly n: number;
   readonly timeUnitS: number;
   readonly a: Float64Array;
-  readonly bw: Float64Array;
-  readonly e: Float64Array;
+  /** Null where w plays no part. */
+  readonly bw: Float64Array | null;
+  readonly constants: readonly Float64Array[];
   readonly y: Reading;
-  readonly u: Reading;
+  /** The controller output before its limits; of a plant without controller, the filtered measurement. */
+  readonly v: Reading;
 }
 
-function dot(a: Float64Array, b: Float64Array): number {
+/** Derivatives of w in a propagator: w, ẇ, ẅ and the third. */
+export const POWERS = 4;
+
+/** A system over a fixed time: z₁ = Φ z₀ + byInput·(w, ẇ, ẅ, w⃛ at the start, per time unit) + byConstant. */
+export interface Propagator {
+  readonly lengthS: number;
+  readonly phi: Float64Array;
+  /** n rows of POWERS columns. */
+  readonly byInput: Float64Array | null;
+  /** One column for each constant input. */
+  readonly byConstant: readonly Float64Array[];
+}
+
+export function dot(a: Float64Array, b: Float64Array): number {
   let sum = 0;
   for (let i = 0; i < a.length; i += 1) sum += a[i] * b[i];
   return sum;
 }
 
-/** dx/dt per second of a signal: the part made of the states and w; a change of w itself comes on top. */
+/** The slope per second of a signal, as far as states, w and constants make it; a change of w itself comes on top. */
 export function slopeReading(space: StateSpace, signal: Reading): Reading {
-  const { n, a, bw, e, timeUnitS } = space;
+  const { n, a, bw, constants, timeUnitS } = space;
   const z = new Float64Array(n);
   for (let i = 0; i < n; i += 1) {
     const factor = signal.z[i] / timeUnitS;
     if (factor !== 0) for (let j = 0; j < n; j += 1) z[j] += factor * a[i * n + j];
   }
-  return { z, w: dot(signal.z, bw) / timeUnitS, one: dot(signal.z, e) / timeUnitS };
-}
-
-/** The loop cut open at the plant's input, for a set-point r. */
-export function openSpace(model: LoopModel, r: number): StateSpace {
-  const { n, timeUnitS, a, bw, br } = model;
-  const reading = ({ z, w, r: one }: Row): Reading => ({ z, w, one: one * r });
-  return { n, timeUnitS, a, bw, e: br.map((b) => b * r), y: reading(model.y), u: reading(model.u) };
-}
-
-/** The loop closed without dead time, for a set-point r and a load. */
-export function closedSpace(model: LoopModel, closed: ClosedModel, r: number, load: number): StateSpace {
-  const { n, timeUnitS } = model;
-  const w = closed.wr * r + closed.wl * load;
-  const reading = (row: Row): Reading => ({
-    z: row.z.map((value, i) => value + row.w * closed.wz[i]),
-    w: 0,
-    one: row.w * w + row.r * r,
-  });
-  const e = closed.br.map((b, i) => b * r + closed.bl[i] * load);
   return {
-    n,
-    timeUnitS,
-    a: closed.a,
-    bw: new Float64Array(n),
-    e,
-    y: reading(model.y),
-    u: reading(model.u),
+    z,
+    w: bw ? dot(signal.z, bw) / timeUnitS : 0,
+    ones: constants.map((e) => dot(signal.z, e) / timeUnitS),
   };
 }

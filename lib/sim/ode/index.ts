@@ -3,7 +3,7 @@ import { ok, type Result } from '../../result';
 import { loadMetrics, setpointMetrics } from '../metrics';
 import type { LoadResponse, SetpointResponse } from '../types';
 import type { IntegrationRefusal } from './integrate';
-import { limitedFinals } from './limited-finals';
+import { limitedFinals } from '../limited-finals';
 import { solveLoop, type OdeOptions } from './solve-loop';
 import { trajectoryOf } from './trajectory';
 

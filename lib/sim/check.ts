@@ -1,13 +1,12 @@
 import { analyseLoop } from '../control/margins';
-import type { Actuator, IdealController, Plant } from '../control/types';
-import { simulateExact } from './exact';
+import type { Actuator, IdealController, Margins, Plant } from '../control/types';
+import { agreementOf } from './agreement';
+import { DEFAULT_POINTS, requireInRange, type Responses } from './exact';
+import { responseFigures } from './exact/figures';
+import { responsesOf } from './exact/responses';
 import { automaticHorizon } from './horizon';
-import type { EngineAgreement, LoadResponse, LoopCheck, SetpointResponse } from './types';
-
-export interface Responses {
-  readonly setpoint: SetpointResponse;
-  readonly load: LoadResponse;
-}
+import { limitedFinals } from './limited-finals';
+import type { LoopCheck } from './types';
 
 /**
  * A simulation engine as the check uses it: one response each to a unit step of set-point and load; null when the
@@ -26,7 +25,7 @@ export interface CheckOptions {
   readonly sampleTimeS?: number;
   /** Length of the responses, s; chosen so that both come to rest when not given. */
   readonly horizonS?: number;
-  /** Points of the curves, ≥ 2. */
+  /** Points of the curves, ≥ 2; 600 when not given. */
   readonly points?: number;
   /** A second, independent engine; the check says how far both agree. */
   readonly secondEngine?: Engine;
@@ -35,90 +34,58 @@ export interface CheckOptions {
 /** Two engines that differ by more than this share of the response have not checked each other. */
 const AGREED = 1e-4;
 
+const NOT_AT_REST = 'The responses do not come to rest within 200 time constants of the loop.';
 const ONE_ENGINE =
   'The second engine could not follow this loop in reasonable time: this is not a check yet.';
-
-function isLimited(actuator: Actuator | undefined): boolean {
-  return (
-    actuator !== undefined &&
-    [actuator.low, actuator.high, actuator.slew].some((limit) => limit !== undefined)
-  );
-}
-
-function largestDifference(a: Float64Array, b: Float64Array): { difference: number; peak: number } {
-  let difference = 0;
-  let peak = 0;
-  // A point on a jump may fall on either side of it in the two engines: its neighbours tell the same.
-  for (let i = 0; i < a.length; i += 1) {
-    peak = Math.max(peak, Math.abs(a[i]));
-    const here = Math.abs(a[i] - b[i]);
-    const before = i > 0 ? Math.abs(a[i - 1] - b[i]) : here;
-    const after = i < a.length - 1 ? Math.abs(a[i + 1] - b[i]) : here;
-    difference = Math.max(difference, Math.min(here, Math.max(before, after)));
-  }
-  return { difference, peak };
-}
-
-/** Each dead time and each sample is at least one step: beyond this many nobody waits for the answer. */
-const MOST_STEPS = 1_000_000;
-const TOO_LONG =
-  'The horizon is more than a million dead times or samples long: state a shorter horizon, or leave the dead time out.';
-
-function tooLong(plant: Plant, horizonS: number, sampleTimeS: number | undefined): boolean {
-  const shortest = Math.min(plant.deadTimeS > 0 ? plant.deadTimeS : Infinity, sampleTimeS ?? Infinity);
-  return horizonS > MOST_STEPS * shortest;
-}
-
-/** Largest difference of y between two engines on the same grid, as a share of the peak; the worse of both responses. */
-function agreementOf(a: Responses, b: Responses): number {
-  const shares = [largestDifference(a.setpoint.y, b.setpoint.y), largestDifference(a.load.y, b.load.y)].map(
-    ({ difference, peak }) => (peak > 0 ? difference / peak : 0),
-  );
-  return Math.max(...shares);
-}
-
-/** The linear loop by exact stepping, and by the second engine where there is one. */
-function linearResponses(plant: Plant, controller: IdealController, horizonS: number, options: CheckOptions) {
-  const { points, secondEngine } = options;
-  const responses = simulateExact(plant, controller, { horizonS, points });
-  if (!secondEngine) return { responses, engines: null, warnings: [] };
-  const second = secondEngine(plant, controller, { horizonS, points });
-  if (!second) return { responses, engines: null, warnings: [ONE_ENGINE] };
-  const engines: EngineAgreement = { agreement: agreementOf(responses, second), engines: ['exact', 'ode'] };
-  const warnings =
-    engines.agreement > AGREED
-      ? ['The two engines differ by more than 1/10000 of the response: this is not a check yet.']
-      : [];
-  return { responses, engines, warnings };
-}
+const DIFFERENT = 'The two engines differ by more than 1/10000 of the response: this is not a check yet.';
+const SLEW_LEFT_OUT = 'The limit on the rate of change is left out of this preview.';
+const SLEW_ALONE = 'With a limit on the rate of change the responses come from one engine alone.';
+const SLEW_FAILED = 'The loop with a limited rate of change could not be followed in reasonable time.';
 
 /**
  * Checks one loop: stability first, then margins with exact dead time, then both responses. Nothing is stated about
  * the responses of an unstable loop.
  *
+ * Definitions: margins as in lib/control/margins, responses as in lib/sim/exact; the horizon, where none is given, is
+ * that of `automaticHorizon`. Margins belong to the linear, continuous loop also where limits or a sample time are given.
+ *
+ * @returns the check; responses are null, with a sentence that says why, where no engine could follow the loop
  * @throws RangeError for a plant or controller outside its range, or for options outside theirs
  */
 export function checkLoop(plant: Plant, controller: IdealController, options: CheckOptions = {}): LoopCheck {
   const { stable, margins } = analyseLoop(plant, controller);
   if (!stable) return { stable, margins, setpoint: null, load: null, engines: null, warnings: [] };
+  return { stable, margins, ...responsesChecked(plant, controller, margins, options) };
+}
+
+function responsesChecked(
+  plant: Plant,
+  controller: IdealController,
+  margins: Margins,
+  options: CheckOptions,
+): Omit<LoopCheck, 'stable' | 'margins'> {
+  const { actuator, sampleTimeS, points = DEFAULT_POINTS, secondEngine } = options;
+  // A rate limit of a continuous controller is beyond the exact engine.
+  const slewed = actuator?.slew !== undefined && sampleTimeS === undefined;
+  const followed = slewed ? { ...actuator, slew: undefined } : actuator;
+  requireInRange({ horizonS: options.horizonS ?? 1, points, actuator: followed, sampleTimeS });
+  const source = responsesOf(plant, controller, { actuator: followed, sampleTimeS });
+  const final = limitedFinals(plant, controller, actuator);
   const { horizonS, settled } = options.horizonS
     ? { horizonS: options.horizonS, settled: true }
-    : automaticHorizon(plant, controller, margins);
-  const slow = settled ? [] : ['The responses do not come to rest within 200 time constants of the loop.'];
-  if (tooLong(plant, horizonS, options.sampleTimeS))
-    return { stable, margins, setpoint: null, load: null, engines: null, warnings: [TOO_LONG] };
-  const { actuator, sampleTimeS, points, secondEngine } = options;
-  const nonlinear = isLimited(actuator) || sampleTimeS !== undefined;
-  if (!nonlinear || !secondEngine) {
-    const { responses, engines, warnings } = linearResponses(plant, controller, horizonS, options);
-    const linear = nonlinear ? ['Limits and sampling are left out of this preview.'] : [];
-    return { stable, margins, ...responses, engines, warnings: [...slow, ...warnings, ...linear] };
+    : automaticHorizon(plant, controller, margins, source, final);
+  const warnings = settled ? [] : [NOT_AT_REST];
+  const second = secondEngine?.(plant, controller, { horizonS, points, actuator, sampleTimeS }) ?? null;
+  if (slewed && secondEngine) {
+    if (!second) return { setpoint: null, load: null, engines: null, warnings: [SLEW_FAILED] };
+    return { ...second, engines: null, warnings: [...warnings, SLEW_ALONE] };
   }
-  const responses = secondEngine(plant, controller, { horizonS, points, actuator, sampleTimeS });
-  if (!responses) {
-    const warnings = ['The limited or sampled loop could not be followed in reasonable time.'];
-    return { stable, margins, setpoint: null, load: null, engines: null, warnings };
-  }
-  const alone = ['With limits or sampling the responses come from one engine alone.'];
-  return { stable, margins, ...responses, engines: null, warnings: [...slow, ...alone] };
+  const exact = responseFigures(source, final, horizonS, points);
+  if (!exact.ok) return { setpoint: null, load: null, engines: null, warnings: [exact.message] };
+  if (slewed) warnings.push(SLEW_LEFT_OUT);
+  if (!secondEngine) return { ...exact.value, engines: null, warnings };
+  if (!second) return { ...exact.value, engines: null, warnings: [...warnings, ONE_ENGINE] };
+  const agreement = agreementOf(exact.value, second);
+  if (!(agreement <= AGREED)) warnings.push(DIFFERENT);
+  return { ...exact.value, engines: { agreement, engines: ['exact', 'ode'] }, warnings };
 }

@@ -10,8 +10,8 @@ import {
 } from '../support/reference-loops';
 
 /**
- * Responses of the exact engine against loops-open.json, computed independently of this repository
- * (SOURCES.md) with errors below 1e-10.
+ * Responses of the exact engine against loops-open.json and nonlinear-open.json, computed independently of this
+ * repository (SOURCES.md) with errors below 1e-9.
  */
 describe('responses of the linear reference loops', () => {
   for (const loop of referenceLoops('loops-open.json')) {
@@ -26,7 +26,25 @@ describe('responses of the linear reference loops', () => {
     it(loop.id, () => {
       const want: ExpectedResponses = { setpoint, load };
       const got = simulateExact(plantOf(loop), controllerOf(loop), { horizonS: setpoint.horizon });
-      expect(differences(got, want, loop.tol)).toEqual([]);
+      expect(differences(got, want)).toEqual([]);
+    });
+  }
+});
+
+describe('responses of the limited and sampled reference loops', () => {
+  for (const loop of referenceLoops('nonlinear-open.json')) {
+    const { continuous, sampled } = loop.expect;
+    const { limits, sampling } = loop;
+    const actuator = limits ? { low: limits.u_min, high: limits.u_max, trackingTimeS: limits.Tt } : {};
+    it.runIf(continuous)(`${loop.id} continuous`, () => {
+      const want = continuous as ExpectedResponses;
+      const options = { horizonS: want.setpoint.horizon, actuator };
+      expect(differences(simulateExact(plantOf(loop), controllerOf(loop), options), want)).toEqual([]);
+    });
+    it.runIf(sampled)(`${loop.id} sampled`, () => {
+      const want = sampled as ExpectedResponses;
+      const options = { horizonS: want.setpoint.horizon, actuator, sampleTimeS: sampling?.h };
+      expect(differences(simulateExact(plantOf(loop), controllerOf(loop), options), want)).toEqual([]);
     });
   }
 });

@@ -24,8 +24,6 @@ export interface ReferenceLoop {
   readonly filter?: { order: 1 | 2; Tf: number };
   readonly limits?: { u_min: number; u_max: number; Tt: number };
   readonly sampling?: { h: number };
-  /** Larger tolerance of a time whose band is nearly touched. */
-  readonly tol?: Record<string, number>;
   readonly expect: { stable?: boolean; setpoint: Figures | null; load: Figures | null } & {
     continuous?: ExpectedResponses;
     sampled?: ExpectedResponses;
@@ -63,7 +61,6 @@ const PRINTED = 1e-11;
 export function differences(
   got: { setpoint: SetpointResponse; load: LoadResponse },
   want: ExpectedResponses,
-  own: Record<string, number> = {},
   factor = 1,
 ): string[] {
   const found: string[] = [];
@@ -74,24 +71,24 @@ export function differences(
   };
   const relative = (name: string, value: number, reference: number | null, share: number) =>
     near(name, value, reference, share * Math.abs(reference ?? 0));
-  const time = (name: string, value: number | null, reference: number | null, own: number | undefined) =>
-    near(name, value, reference, Math.max((own ?? TIME) * (reference ?? 0), TIME_FLOOR * horizon));
+  const time = (name: string, value: number | null, reference: number | null) =>
+    near(name, value, reference, Math.max(TIME * (reference ?? 0), TIME_FLOOR * horizon));
   const { setpoint: s, load: l } = want;
   const { horizon } = s;
   relative('yss', got.setpoint.final, s.yss, FINAL);
   near('overshoot', got.setpoint.overshootPct, s.overshoot_pct, OVERSHOOT_POINTS);
-  time('peak time', got.setpoint.peakTimeS, s.peak_time, own.peak_time);
-  time('rise time', got.setpoint.riseTimeS, s.rise_time_10_90, own.rise_time_10_90);
-  time('settling time', got.setpoint.settlingTimeS, s.settling_time_2pct, own.settling_time_2pct);
+  time('peak time', got.setpoint.peakTimeS, s.peak_time);
+  time('rise time', got.setpoint.riseTimeS, s.rise_time_10_90);
+  time('settling time', got.setpoint.settlingTimeS, s.settling_time_2pct);
   relative('IAE', got.setpoint.iae, s.IAE, AMPLITUDE);
   relative('ISE', got.setpoint.ise, s.ISE, AMPLITUDE);
   relative('ITAE', got.setpoint.itae, s.ITAE, AMPLITUDE);
   relative('u max', got.setpoint.controlPeak, s.u_max, AMPLITUDE);
   relative('TV', got.setpoint.totalVariation, s.TV_u, VARIATION);
   relative('load peak', got.load.peak, l.y_peak, AMPLITUDE);
-  time('load peak time', got.load.peakTimeS, l.t_peak, own.t_peak);
+  time('load peak time', got.load.peakTimeS, l.t_peak);
   relative('load final', got.load.final, l.y_final, FINAL);
-  time('recovery time', got.load.recoveryTimeS, l.recovery_time_2pct, own.recovery_time_2pct);
+  time('recovery time', got.load.recoveryTimeS, l.recovery_time_2pct);
   relative('load IAE', got.load.iae, l.IAE, AMPLITUDE);
   return found;
 }

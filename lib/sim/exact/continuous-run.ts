@@ -1,9 +1,9 @@
-import type { Trajectory } from '../metrics';
 import { Breaks } from './breaks';
 import { constantOf, type ContinuousLoop } from './continuous-loop';
 import { timeOutside } from './limit-event';
+import type { Floors } from './loop-scales';
 import type { StepKind } from './spaces';
-import { Stepper, type Span, type StepperSettings } from './stepper';
+import { Stepper, type Span } from './stepper';
 
 /** Steps are made no shorter than this share of the time asked for. */
 const MOST_STEPS = 2e6;
@@ -24,20 +24,20 @@ export class ContinuousRun {
   constructor(
     private readonly loop: ContinuousLoop,
     private readonly kind: StepKind,
-    settings: StepperSettings,
+    floors?: Floors,
   ) {
-    this.stepper = new Stepper(settings);
+    this.stepper = new Stepper({ ...loop.settings[kind], ...floors });
     this.breaks = new Breaks(loop.deadTimeS, loop.smoothing, loop.direct);
     this.breaks.arise(0, 0);
     this.choose();
   }
 
   /** Goes on until the trajectory covers the time. */
-  extendTo(timeS: number): Trajectory {
+  extendTo(timeS: number): void {
     const { stepper, breaks } = this;
     const { baseS, leastLevel } = stepper.settings;
     stepper.leastLevel = Math.max(leastLevel, Math.ceil(Math.log2(timeS / MOST_STEPS / baseS)));
-    while (stepper.timeS < timeS) {
+    while (stepper.timeS < timeS && !stepper.refusal) {
       const from = stepper.timeS;
       const changed = stepper.run(this.span(this.mode), timeS);
       if (stepper.timeS > from) this.changes = 0;
@@ -47,7 +47,6 @@ export class ContinuousRun {
         this.choose();
       }
     }
-    return stepper.trajectory;
   }
 
   private span(mode: Mode): Span {

@@ -1,8 +1,15 @@
+import { ok, type Result } from '../../result';
 import type { FinalValues } from '../final-values';
 import { loadMetrics, setpointMetrics } from '../metrics';
 import type { LoadResponse, SetpointResponse } from '../types';
 import { cutAt } from './cut-at';
 import type { ResponseSource } from './responses';
+import type { Refusal } from './stepper';
+
+export interface Responses {
+  readonly setpoint: SetpointResponse;
+  readonly load: LoadResponse;
+}
 
 /** Both responses with their figures; the source has been used up then, its trajectories end at the horizon. */
 export function responseFigures(
@@ -10,10 +17,14 @@ export function responseFigures(
   final: FinalValues,
   horizonS: number,
   points: number,
-): { setpoint: SetpointResponse; load: LoadResponse } {
-  const upTo = (kind: 'setpoint' | 'load') => cutAt(source.upTo(kind, horizonS), horizonS);
-  return {
-    setpoint: setpointMetrics(upTo('setpoint'), { horizonS, points, final: final.setpoint }),
-    load: loadMetrics(upTo('load'), { horizonS, points, final: final.load }),
-  };
+): Result<Responses, Refusal> {
+  const setpoint = source.upTo('setpoint', horizonS);
+  if (!setpoint.ok) return setpoint;
+  const load = source.upTo('load', horizonS);
+  if (!load.ok) return load;
+  const options = { horizonS, points };
+  return ok({
+    setpoint: setpointMetrics(cutAt(setpoint.value, horizonS), { ...options, final: final.setpoint }),
+    load: loadMetrics(cutAt(load.value, horizonS), { ...options, final: final.load }),
+  });
 }

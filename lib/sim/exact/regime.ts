@@ -1,6 +1,12 @@
+import type { Levels } from './loop-scales';
 import { slopeReading, type Reading, type StateSpace } from './state-space';
 import { StepLevels } from './step-levels';
 import { stepOperator, type StepOperator } from './step-operator';
+
+/** Operators of odd lengths that are kept; a sampled loop comes back to the same few. */
+const KEPT = 8;
+/** Lengths that differ by less than this share are one. */
+const SAME = 1e-10;
 
 /** A system with everything that is prepared once for all steps through it. */
 export class Regime {
@@ -8,15 +14,15 @@ export class Regime {
   readonly dv: Reading;
   private readonly levels: StepLevels;
   private readonly operators = new Map<number, StepOperator>();
+  private readonly odd: StepOperator[] = [];
 
-  /** @param baseS length of level 0, s; @param deadTimeS 0 where v does not act on the system after a dead time */
+  /** @param deadTimeS 0 where v does not act on the system after a dead time */
   constructor(
     readonly space: StateSpace,
-    baseS: number,
-    lowestLevel: number,
+    { baseS, leastLevel }: Levels,
     private readonly deadTimeS: number,
   ) {
-    this.levels = new StepLevels(space, baseS, lowestLevel);
+    this.levels = new StepLevels(space, baseS, leastLevel);
     this.dy = slopeReading(space, space.y);
     this.dv = slopeReading(space, space.v);
   }
@@ -31,8 +37,14 @@ export class Regime {
     return operator;
   }
 
-  /** A step of any length, used once. */
+  /** A step of any length. */
   stepOver(lengthS: number): StepOperator {
-    return stepOperator(this.space, this.levels.over(lengthS), this.deadTimeS);
+    const { odd } = this;
+    const found = odd.find(({ stepS }) => Math.abs(stepS - lengthS) <= SAME * lengthS);
+    if (found) return found;
+    const operator = stepOperator(this.space, this.levels.over(lengthS), this.deadTimeS);
+    odd.unshift(operator);
+    if (odd.length > KEPT) odd.pop();
+    return operator;
   }
 }

@@ -1,50 +1,64 @@
 import type { Actuator, IdealController, Plant } from '../../control/types';
+import { ok, refuse, type Result } from '../../result';
 import type { Trajectory } from '../metrics';
 import { continuousLoop } from './continuous-loop';
 import { ContinuousRun } from './continuous-run';
+import type { Floors } from './loop-scales';
+import { SampledRun } from './sampled-run';
 import type { StepKind } from './spaces';
-import type { StepperSettings } from './stepper';
+import type { Refusal, Stepper } from './stepper';
 
 /** Both responses of a loop, each computed as far as it has been asked for. */
 export interface ResponseSource {
   /** A trajectory that covers at least the time from 0 to timeS; it grows with the next call. */
-  upTo(kind: StepKind, timeS: number): Trajectory;
+  upTo(kind: StepKind, timeS: number): Result<Trajectory, Refusal>;
+}
+
+/** A response that can be extended; with the sizes it came to. */
+interface Run {
+  readonly stepper: Stepper;
+  /** Goes on until the trajectory covers the time. */
+  extendTo(timeS: number): void;
 }
 
 /** The responses of a loop as its controller runs: continuous or sampled, with or without output limits. */
 export function responsesOf(
   plant: Plant,
   controller: IdealController,
-  { actuator = {} }: { actuator?: Actuator; sampleTimeS?: number },
+  { actuator = {}, sampleTimeS }: { actuator?: Actuator; sampleTimeS?: number } = {},
 ): ResponseSource {
-  return continuousResponses(plant, controller, actuator);
+  if (sampleTimeS !== undefined)
+    return source(
+      (kind, floors) => new SampledRun(plant, controller, { kind, sampleTimeS, actuator, floors }),
+    );
+  const loop = continuousLoop(plant, controller, actuator);
+  return source((kind, floors) => new ContinuousRun(loop, kind, floors));
 }
 
-/** The responses of a loop with a continuous controller, with or without output limits. */
-export function continuousResponses(
-  plant: Plant,
-  controller: IdealController,
-  actuator: Actuator = {},
-): ResponseSource {
-  const loop = continuousLoop(plant, controller, actuator);
-  const start = (kind: StepKind, settings: StepperSettings) => new ContinuousRun(loop, kind, settings);
-  const runs: Partial<Record<StepKind, ContinuousRun>> = {};
-  return {
-    upTo: (kind, timeS) => {
-      const run = (runs[kind] ??= start(kind, loop.settings[kind]));
-      const trajectory = run.extendTo(timeS);
-      const smaller = rescaled(run);
-      if (!smaller) return trajectory;
-      runs[kind] = start(kind, smaller);
-      return runs[kind].extendTo(timeS);
-    },
-  };
+const MESSAGES: Readonly<Record<Refusal, string>> = {
+  DIVERGED: 'The response grows without bound.',
+  TOO_LONG: 'The response takes more than a million steps: state a shorter horizon.',
+};
+
+function answer({ stepper }: Run): Result<Trajectory, Refusal> {
+  const { refusal, trajectory } = stepper;
+  return refusal ? refuse(refusal, MESSAGES[refusal]) : ok(trajectory);
 }
 
 /** A response much smaller than expected is computed again with its own size as the measure of its errors. */
-function rescaled({ stepper }: ContinuousRun): StepperSettings | null {
-  const { peakY, peakV, settings } = stepper;
-  const yFloor = peakY > 0 && peakY < settings.yFloor ? peakY : settings.yFloor;
-  const vFloor = peakV > 0 && peakV < settings.vFloor ? peakV : settings.vFloor;
-  return yFloor < settings.yFloor || vFloor < settings.vFloor ? { ...settings, yFloor, vFloor } : null;
+function source(start: (kind: StepKind, floors?: Floors) => Run): ResponseSource {
+  const runs: Partial<Record<StepKind, Run>> = {};
+  return {
+    upTo: (kind, timeS) => {
+      const run = (runs[kind] ??= start(kind));
+      run.extendTo(timeS);
+      const { peakY, peakV, settings } = run.stepper;
+      const yFloor = peakY > 0 ? Math.min(peakY, settings.yFloor) : settings.yFloor;
+      const vFloor = peakV > 0 ? Math.min(peakV, settings.vFloor) : settings.vFloor;
+      if (yFloor === settings.yFloor && vFloor === settings.vFloor) return answer(run);
+      const again = (runs[kind] = start(kind, { yFloor, vFloor }));
+      again.extendTo(timeS);
+      return answer(again);
+    },
+  };
 }

@@ -1,6 +1,7 @@
 import { Trajectory } from '../metrics';
 import { DelayedOutput } from './delayed-output';
 import { pairError, type PairError } from './pair-error';
+import type { Floors, Levels } from './loop-scales';
 import type { Regime } from './regime';
 import { dot, POWERS, type Reading } from './state-space';
 import type { StepOperator } from './step-operator';
@@ -19,19 +20,19 @@ export interface Span {
   readonly event?: (stepper: Stepper) => number | null;
 }
 
-export interface StepperSettings {
+export interface StepperSettings extends Levels, Floors {
   readonly order: number;
+  /** Dead time between the controller output and the plant, s, and what is added to the output after it. */
   readonly deadTimeS: number;
   readonly load: number;
-  /** Length of level 0, s, the level to begin with and the lowest one. */
-  readonly baseS: number;
-  readonly firstLevel: number;
-  readonly leastLevel: number;
-  /** Sizes that y and v are expected to exceed. */
-  readonly yFloor: number;
-  readonly vFloor: number;
 }
 
+/** A response that grows without bound, or one that needs more steps than anyone waits for. */
+export type Refusal = 'DIVERGED' | 'TOO_LONG';
+
+/** A response this many times larger than expected has left every useful range. */
+const DIVERGED = 1e12;
+const MOST_PIECES = 1_000_000;
 /** Errors of the cubics, as shares of the largest y and v so far. */
 const Y_ERROR = 1e-7;
 const V_ERROR = 2e-7;
@@ -80,7 +81,7 @@ export class Stepper {
     let position = 0;
     for (;;) {
       const leftS = span.endS - this.timeS;
-      if (leftS <= 0 || this.timeS >= enoughS) return false;
+      if (leftS <= 0 || this.timeS >= enoughS || this.refusal) return false;
       let length = 2 ** this.level;
       let stepS = settings.baseS * length;
       const last = leftS <= 2 * stepS * (1 + 1e-9);
@@ -117,6 +118,14 @@ export class Stepper {
       length *= 4;
       if (!fitted && good && this.mayDouble() && position % length === 0) this.level += 1;
     }
+  }
+
+  /** Why the response is not followed any further. */
+  get refusal(): Refusal | null {
+    const { peakY, peakV, trajectory, settings } = this;
+    // Written so that a value that is not a number counts as too large.
+    if (!(peakY <= DIVERGED * settings.yFloor && peakV <= DIVERGED * settings.vFloor)) return 'DIVERGED';
+    return trajectory.count > MOST_PIECES ? 'TOO_LONG' : null;
   }
 
   private mayDouble(): boolean {

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { RULES, type RuleId } from '../control/rules';
 import { actuatorShape, controllerShape, plantOrLoadCases, plantShape, requirementShape } from './loop';
 
-const positive = z.number().positive();
+const positive = z.number().min(1e-15, 'Must be above 0, 1e-15 or more.').max(1e15, 'Must be 1e15 or less.');
 
 export const parseRequest = z.object({ text: z.string().max(4000) });
 

@@ -11,7 +11,7 @@ export const keepGainSetInput = z
       .optional(),
     requirement: requirementShape.optional(),
     actuator: actuatorShape.optional(),
-    sampleTime: z.number().positive().optional(),
+    sampleTime: z.number().min(1e-9).max(1e9).optional(),
     reason: z.string().trim().min(1, 'Say why in a few words.').max(2000),
   })
   .refine(({ plant, loadCases }) => (plant === undefined) !== (loadCases === undefined), {

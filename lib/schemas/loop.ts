@@ -7,11 +7,18 @@ import type { Requirement } from '../requirement';
  * The shapes of a loop as the public API writes them, read into the objects of the control core. Infinite values are
  * "inf" outside and Infinity inside.
  */
-const finite = z.number();
-const positive = z.number().positive();
-const notNegative = z.number().min(0);
+const LARGEST = 1e15;
+const SMALLEST = 1e-15;
+const RANGE = `Must be 0 or of a size between ${SMALLEST} and ${LARGEST}: nothing beyond can be computed with.`;
+const computable = (value: number) =>
+  value === 0 || (Math.abs(value) >= SMALLEST && Math.abs(value) <= LARGEST);
+
+const finite = z.number().refine(computable, RANGE);
+const positive = z.number().positive().refine(computable, RANGE);
+const notNegative = z.number().min(0).refine(computable, RANGE);
+/** A plant's coefficients have a wider range of their own, judged with the plant. */
 const coefficients = z
-  .array(finite)
+  .array(z.number())
   .min(1, 'Give at least one coefficient.')
   .max(41, 'Too many coefficients.');
 
@@ -20,7 +27,7 @@ export const plantShape = z
   .union(
     [
       z.object({ text: z.string().max(4000) }),
-      z.object({ num: coefficients, den: coefficients, delay: finite.optional() }),
+      z.object({ num: coefficients, den: coefficients, delay: z.number().optional() }),
     ],
     { error: 'Give the plant as {num, den, delay} with lists of finite numbers, or as {text}.' },
   )

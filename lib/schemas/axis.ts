@@ -1,7 +1,7 @@
 import { z } from 'zod';
 
 const unit = z.string().trim().min(1, 'State the unit, as it stands on the display.').max(16);
-const number = z.number('Type a number.');
+const number = z.number('Type a number.').min(-1e12, 'Beyond any unit.').max(1e12, 'Beyond any unit.');
 const positive = number.positive('Must be above 0.');
 
 /** How the target controller wants its gains. More of lib/control/forms can be stated as data later. */

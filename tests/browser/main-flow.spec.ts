@@ -18,7 +18,9 @@ interface ReferenceLoop {
   };
 }
 
-const loops = JSON.parse(readFileSync('tests/reference/loops-open.json', 'utf8')) as { cases: ReferenceLoop[] };
+const loops = JSON.parse(readFileSync('tests/reference/loops-open.json', 'utf8')) as {
+  cases: ReferenceLoop[];
+};
 const found = loops.cases.find(({ id }) => id === 'o-fopdt-03');
 if (!found) throw new Error('the reference loop o-fopdt-03 is missing');
 const loop = found;
@@ -113,7 +115,9 @@ test('from a pasted plant to a change that is applied, by three people', async (
   const approver = await Person.at(browser);
   await test.step('another person signs with the password, and issues', async () => {
     await approver.signIn('approver');
-    await expect(approver.page.getByText('Slower belt').or(approver.page.getByText('The belt overruns')).first()).toBeVisible();
+    await expect(
+      approver.page.getByText('Slower belt').or(approver.page.getByText('The belt overruns')).first(),
+    ).toBeVisible();
     await approver.page.goto(record);
     await approver.type('Your password, to sign', 'not the password');
     await approver.press('Sign and approve');
@@ -162,8 +166,12 @@ test('from a pasted plant to a change that is applied, by three people', async (
     await admin.signIn('admin');
     await expect(async () => {
       await admin.page.goto('/inbox');
-      await expect(admin.page.locator('[data-letter]').filter({ hasText: 'SC-05 has been applied' }).first()).toBeVisible({ timeout: 1000 });
+      await expect(
+        admin.page.locator('[data-letter]').filter({ hasText: 'SC-05 has been applied' }).first(),
+      ).toBeVisible({ timeout: 1000 });
     }).toPass({ timeout: 20_000 });
-    await expect(admin.page.locator('[data-letter]').filter({ hasText: 'SC-05 waits for your signature' }).first()).toBeVisible();
+    await expect(
+      admin.page.locator('[data-letter]').filter({ hasText: 'SC-05 waits for your signature' }).first(),
+    ).toBeVisible();
   });
 });

@@ -7,6 +7,9 @@ import { Regime } from './regime';
 import { closedSpace, EXCITATIONS, heldSpace, openSpace, type StepKind } from './spaces';
 import type { StepperSettings } from './stepper';
 
+/** What holds the controller output: nothing, or one of its limits. */
+export type Mode = 'free' | 'low' | 'high';
+
 /** A loop with a continuous controller, prepared for both of its responses. */
 export interface ContinuousLoop {
   readonly deadTimeS: number;
@@ -65,8 +68,8 @@ export function continuousLoop(
   };
 }
 
-/** The constant input of a response in the free regime, and of a limit (0 low, 1 high) in the held one. */
-export function constantOf(kind: StepKind, limit?: 0 | 1): number {
+/** The constant input of a response in a mode: free regimes have one for each response, held ones one for each limit. */
+export function constantOf(kind: StepKind, mode: Mode): number {
   const response = EXCITATIONS.findIndex((excitation) => excitation.kind === kind);
-  return limit === undefined ? response : 2 * response + limit;
+  return mode === 'free' ? response : 2 * response + (mode === 'low' ? 0 : 1);
 }

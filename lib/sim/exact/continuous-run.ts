@@ -1,5 +1,5 @@
 import { Breaks } from './breaks';
-import { constantOf, type ContinuousLoop } from './continuous-loop';
+import { constantOf, type ContinuousLoop, type Mode } from './continuous-loop';
 import { timeOutside } from './limit-event';
 import type { Floors } from './loop-scales';
 import type { StepKind } from './spaces';
@@ -11,8 +11,6 @@ const MOST_STEPS = 2e6;
 const MARGIN = 1e-10;
 /** Changes of regime at one and the same time. */
 const MOST_CHANGES = 4;
-
-type Mode = 'free' | 'low' | 'high';
 
 /** One response of a loop with a continuous controller from rest, computed as far as it is asked for. */
 export class ContinuousRun {
@@ -52,19 +50,24 @@ export class ContinuousRun {
   private span(mode: Mode): Span {
     const { loop, kind, stepper, breaks } = this;
     const { deadTimeS, low, high, free, held } = loop;
-    const silent = deadTimeS === 0 || stepper.timeS < deadTimeS * (1 - 1e-9);
-    const common = { endS: breaks.next(), input: silent ? 0 : ('delayed' as const) };
+    const isHeld = mode !== 'free' && held !== null;
+    return {
+      endS: breaks.next(),
+      regime: isHeld ? held : free,
+      constant: constantOf(kind, mode),
+      held: isHeld ? (mode === 'low' ? low : high) : NaN,
+      delayed: deadTimeS > 0 && stepper.timeS >= deadTimeS * (1 - 1e-9),
+      input: 0,
+      event: held && this.changes <= MOST_CHANGES ? (s) => this.timeOfChange(s, mode) : null,
+    };
+  }
+
+  private timeOfChange(stepper: Stepper, mode: Mode): number | null {
+    const { low, high } = this.loop;
     const margin = MARGIN * Math.max(stepper.peakV, stepper.settings.vFloor);
-    if (mode === 'free' || !held) {
-      const span = { ...common, regime: free, constant: constantOf(kind), held: null };
-      if (!held || this.changes > MOST_CHANGES) return span;
-      return { ...span, event: (s) => timeOutside(s, low - margin, high + margin) };
-    }
-    const limit = mode === 'low' ? 0 : 1;
-    const span = { ...common, regime: held, constant: constantOf(kind, limit), held: limit ? high : low };
-    if (this.changes > MOST_CHANGES) return span;
-    const [bottom, top] = limit ? [high - margin, Infinity] : [-Infinity, low + margin];
-    return { ...span, event: (s) => timeOutside(s, bottom, top) };
+    if (mode === 'free') return timeOutside(stepper, low - margin, high + margin);
+    if (mode === 'high') return timeOutside(stepper, high - margin, Infinity);
+    return timeOutside(stepper, -Infinity, low + margin);
   }
 
   /** At the start, and where something sharp arrives: the regime that v asks for. */

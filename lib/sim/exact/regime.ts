@@ -1,5 +1,5 @@
 import type { Levels } from './loop-scales';
-import { slopeReading, type Reading, type StateSpace } from './state-space';
+import { slopeReading, type StateSpace } from './state-space';
 import { StepLevels } from './step-levels';
 import { stepOperator, type StepOperator } from './step-operator';
 
@@ -10,8 +10,12 @@ const SAME = 1e-10;
 
 /** A system with everything that is prepared once for all steps through it. */
 export class Regime {
-  readonly dy: Reading;
-  readonly dv: Reading;
+  /** Factors of the states in y, ẏ, v, v̇: four rows. */
+  readonly rows: Float64Array;
+  /** Factors of w in the same four. */
+  readonly direct: Float64Array;
+  /** What each constant input adds to them. */
+  readonly offsets: readonly Float64Array[];
   private readonly levels: StepLevels;
   private readonly operators = new Map<number, StepOperator>();
   private readonly odd: StepOperator[] = [];
@@ -23,8 +27,12 @@ export class Regime {
     private readonly deadTimeS: number,
   ) {
     this.levels = new StepLevels(space, baseS, leastLevel);
-    this.dy = slopeReading(space, space.y);
-    this.dv = slopeReading(space, space.v);
+    const { y, v, n } = space;
+    const readings = [y, slopeReading(space, y), v, slopeReading(space, v)];
+    this.rows = new Float64Array(4 * n);
+    readings.forEach(({ z }, k) => this.rows.set(z, k * n));
+    this.direct = Float64Array.from(readings, ({ w }) => w);
+    this.offsets = space.constants.map((_, c) => Float64Array.from(readings, ({ ones }) => ones[c]));
   }
 
   /** A step of length base·2^level. */

@@ -5,7 +5,7 @@ import { balanced, loopModel } from './loop-model';
 import { Regime } from './regime';
 import { SampledLaw } from './sampled-law';
 import { plantSpace, type StepKind } from './spaces';
-import { Stepper } from './stepper';
+import { Stepper, type Span } from './stepper';
 
 export interface SampledOptions {
   readonly kind: StepKind;
@@ -64,26 +64,22 @@ export class SampledRun {
 
   /** Goes on until the trajectory covers the time. */
   extendTo(timeS: number): void {
-    const { stepper, outputs, sampleTimeS, regime } = this;
+    const { stepper, outputs, sampleTimeS } = this;
     while (stepper.timeS < timeS && !stepper.refusal) {
       if (stepper.timeS >= outputs.length * sampleTimeS - SAME * sampleTimeS) this.sample();
       this.receive();
-      stepper.run(
-        {
-          endS: Math.min(outputs.length * sampleTimeS, this.nextArrival()),
-          regime,
-          constant: 0,
-          held: outputs[outputs.length - 1],
-          input: this.input,
-        },
-        timeS,
-      );
+      const endS = Math.min(outputs.length * sampleTimeS, this.nextArrival());
+      stepper.run(this.span(endS, outputs[outputs.length - 1]), timeS);
     }
   }
 
+  private span(endS: number, held: number): Span {
+    const { regime, input } = this;
+    return { endS, regime, constant: 0, held, delayed: false, input, event: null };
+  }
+
   private sample(): void {
-    const { stepper, regime, input } = this;
-    const measured = stepper.startV({ endS: 0, regime, constant: 0, held: null, input });
+    const measured = this.stepper.startV(this.span(0, 0));
     this.outputs.push(this.law.next(this.r, measured));
   }
 

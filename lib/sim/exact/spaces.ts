@@ -20,7 +20,11 @@ function sum(a: Float64Array, b: Float64Array): Float64Array {
 /** The loop cut open at the plant's input, its output not limited. The load comes with w. */
 export function openSpace(model: LoopModel): StateSpace {
   const { n, timeUnitS, a, bw, br } = model;
-  const reading = (row: Row): Reading => ({ ...row, ones: EXCITATIONS.map(({ r }) => row.r * r) });
+  const reading = (row: Row): Reading => ({
+    z: row.z,
+    w: row.w,
+    ones: EXCITATIONS.map(({ r }) => row.r * r),
+  });
   const constants = EXCITATIONS.map(({ r }) => scaledRow(br, r));
   return { n, timeUnitS, a, bw, constants, y: reading(model.y), v: reading(model.v) };
 }
@@ -83,7 +87,7 @@ export function heldSpace(
 /** Plant and measurement filter alone, driven by w: for a controller that is computed from sample to sample. */
 export function plantSpace(model: LoopModel): StateSpace {
   const { n, timeUnitS, a, bw, y, measured } = model;
-  const reading = (row: Row): Reading => ({ ...row, ones: [0] });
+  const reading = (row: Row): Reading => ({ z: row.z, w: row.w, ones: [0] });
   const constants = [new Float64Array(n)];
   return { n, timeUnitS, a, bw, constants, y: reading(y), v: reading(measured) };
 }

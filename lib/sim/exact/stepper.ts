@@ -3,7 +3,7 @@ import { DelayedOutput } from './delayed-output';
 import { pairError, type PairError } from './pair-error';
 import type { Floors, Levels } from './loop-scales';
 import type { Regime } from './regime';
-import { dot, POWERS, type Reading } from './state-space';
+import { POWERS } from './state-space';
 import type { StepOperator } from './step-operator';
 
 /** A stretch of time over which one regime holds and nothing sharp reaches the plant. */
@@ -12,12 +12,13 @@ export interface Span {
   readonly regime: Regime;
   /** Which constant input of the regime. */
   readonly constant: number;
-  /** What leaves the controller; null: v itself. */
-  readonly held: number | null;
-  /** What reaches the plant: a constant, or the controller output one dead time ago plus the load. */
-  readonly input: number | 'delayed';
-  /** Where v first asks for another regime within the last two pieces, s; null where it does not. */
-  readonly event?: (stepper: Stepper) => number | null;
+  /** What leaves the controller, where that is not v itself but a constant; NaN otherwise. */
+  readonly held: number;
+  /** The controller output of one dead time ago, plus the load, reaches the plant; otherwise `input` does. */
+  readonly delayed: boolean;
+  readonly input: number;
+  /** Where v first asks for another regime within the last two pieces, s; null where it does not, or nothing asks. */
+  readonly event: ((stepper: Stepper) => number | null) | null;
 }
 
 export interface StepperSettings extends Levels, Floors {
@@ -33,9 +34,11 @@ export type Refusal = 'DIVERGED' | 'TOO_LONG';
 /** A response this many times larger than expected has left every useful range. */
 const DIVERGED = 1e12;
 const MOST_PIECES = 1_000_000;
-/** Errors of the cubics, as shares of the largest y and v so far. */
-const Y_ERROR = 1e-7;
-const V_ERROR = 2e-7;
+/** Error of the cubic of y, as a share of the largest so far. */
+const Y_ERROR = 1e-6;
+/** The same of v; where v comes back after a dead time its errors add up over the response. */
+const V_ERROR = 2e-6;
+const ECHOED_ERROR = 2e-7;
 
 /**
  * Steps through the spans of a response, exactly but for the cubic that stands for the delayed output over a step.
@@ -47,27 +50,38 @@ export class Stepper {
   timeS = 0;
   level: number;
   leastLevel: number;
-  z: Float64Array;
-  peakY = 0;
-  peakV = 0;
+  peakY: number;
+  peakV: number;
   /** v, v̇ at the start and at the end of each of the last two pieces. */
   readonly pairV = new Float64Array(8);
-  /** Pieces before the last pair. */
-  countBefore = 0;
-  private readonly history: DelayedOutput;
-  private readonly saved: Float64Array;
+  private z: Float64Array;
   private next: Float64Array;
+  private readonly saved: Float64Array;
   /** What the states make of y, ẏ, v, v̇. */
   private readonly now = new Float64Array(4);
-  private readonly error: PairError = { y: 0, v: 0 };
+  private readonly history: DelayedOutput;
+  private readonly error: PairError = { y: 0.5, v: 0.5 };
+  private readonly order: number;
+  private readonly deadTimeS: number;
+  private readonly load: number;
+  private readonly vError: number;
+  /** Pieces before the last pair. */
+  private countBefore = 0;
 
   constructor(readonly settings: StepperSettings) {
-    this.level = settings.firstLevel;
-    this.leastLevel = settings.leastLevel;
+    const { order, deadTimeS, load, firstLevel, leastLevel } = settings;
+    this.level = firstLevel;
+    this.leastLevel = leastLevel;
+    this.order = order;
+    this.deadTimeS = deadTimeS;
+    this.load = load;
+    this.vError = deadTimeS > 0 ? ECHOED_ERROR : V_ERROR;
+    this.peakY = 0;
+    this.peakV = 0;
     this.history = new DelayedOutput(this.trajectory);
-    this.z = new Float64Array(settings.order);
-    this.saved = new Float64Array(settings.order);
-    this.next = new Float64Array(settings.order);
+    this.z = new Float64Array(order);
+    this.saved = new Float64Array(order);
+    this.next = new Float64Array(order);
   }
 
   /**
@@ -129,15 +143,15 @@ export class Stepper {
   }
 
   private mayDouble(): boolean {
-    const { error, settings } = this;
-    return (
-      error.y <= (0.5 / 16) * Y_ERROR * Math.max(this.peakY, settings.yFloor) &&
-      error.v <= (0.5 / 16) * V_ERROR * Math.max(this.peakV, settings.vFloor)
-    );
+    return this.error.y <= this.yAllowed() / 32 && this.error.v <= this.vAllowed() / 32;
+  }
+
+  private yAllowed(): number {
+    return Y_ERROR * Math.max(this.peakY, this.settings.yFloor);
   }
 
   private vAllowed(): number {
-    return V_ERROR * Math.max(this.peakV, this.settings.vFloor);
+    return this.vError * Math.max(this.peakV, this.settings.vFloor);
   }
 
   private goBack(regime: Regime, timeS: number): void {
@@ -162,22 +176,23 @@ export class Stepper {
     const first = this.take(span, operator, middleS, 0);
     const even = this.take(span, operator, endS, 4) && first;
     pairError(this.trajectory, this.pairV, this.error);
-    const { error, settings } = this;
-    return even && error.y <= Y_ERROR * Math.max(this.peakY, settings.yFloor) && error.v <= this.vAllowed();
+    return even && this.error.y <= this.yAllowed() && this.error.v <= this.vAllowed();
   }
 
   /** One step to a time; false when what comes back after the dead time is too uneven for one cubic. */
   private take(span: Span, operator: StepOperator, toS: number, into: number): boolean {
-    const { settings, history, trajectory, z, next, timeS } = this;
-    const { regime, held, input, constant } = span;
-    const { order, deadTimeS, load } = settings;
+    const { history, trajectory, timeS, order, deadTimeS, load } = this;
+    const { held, input, constant, regime } = span;
+    const isHeld = !Number.isNaN(held);
     const { phi, gamma, stepS, echo } = operator;
+    const index = trajectory.add(toS);
     let even = true;
     let w0 = 0;
     let s0 = 0;
     let w1 = 0;
     let s1 = 0;
-    if (input !== 'delayed') {
+    let echoed = false;
+    if (!span.delayed) {
       w0 = input;
       w1 = input;
     } else {
@@ -193,34 +208,34 @@ export class Stepper {
           history.between(0.5 * (timeS + toS) - deadTimeS);
           even = Math.abs(history.value + load - 0.5 * (w0 + w1) - 0.125 * (s0 - s1)) <= this.vAllowed();
         }
-      } else if (held !== null) w1 = held + load;
+      } else if (isHeld) w1 = held + load;
+      else echoed = true;
     }
+    this.write(span, index, into, w0, s0 / stepS);
+    const { z, next } = this;
     const one = operator.ones[constant];
-    for (let i = 0, row = 0; i < order; i += 1, row += order) {
+    for (let i = 0, row = 0; i < order; i += 1) {
       let sum = one[i];
-      for (let j = 0; j < order; j += 1) sum += phi[row + j] * z[j];
+      for (let j = 0; j < order; j += 1, row += 1) sum += phi[row] * z[j];
       next[i] = sum;
     }
-    if (gamma)
-      for (let i = 0, g = 0; i < order; i += 1, g += POWERS) next[i] += gamma[g] * w0 + gamma[g + 1] * s0;
-    const index = trajectory.add(toS);
-    this.write(span, index, into, w0, s0 / stepS);
-    if (echo && held === null && toS - deadTimeS > timeS + 1e-6 * stepS) {
-      const { pairV } = this;
-      const v0 = pairV[into];
-      const d0 = stepS * pairV[into + 1];
-      const v1 = value(regime.space.v, next, constant);
-      const d1 = stepS * value(regime.dv, next, constant);
-      const { start, end, solve } = echo;
-      const p = start[0] * v0 + start[1] * d0 + end[0] * v1 + end[1] * d1 + load;
-      const q = start[2] * v0 + start[3] * d0 + end[2] * v1 + end[3] * d1;
-      w1 = solve[0] * p + solve[1] * q;
-      s1 = solve[2] * p + solve[3] * q;
-    }
-    if (gamma)
-      for (let i = 0, g = 0; i < order; i += 1, g += POWERS) next[i] += gamma[g + 2] * w1 + gamma[g + 3] * s1;
     this.z = next;
     this.next = z;
+    if (gamma) {
+      for (let i = 0, g = 0; i < order; i += 1, g += POWERS) next[i] += gamma[g] * w0 + gamma[g + 1] * s0;
+      if (echoed && echo) {
+        this.readStates(regime);
+        const [v0, d0] = [this.pairV[into], stepS * this.pairV[into + 1]];
+        const v1 = this.now[2] + regime.offsets[constant][2];
+        const d1 = stepS * (this.now[3] + regime.offsets[constant][3]);
+        const { start, end, solve } = echo;
+        const p = start[0] * v0 + start[1] * d0 + end[0] * v1 + end[1] * d1 + load;
+        const q = start[2] * v0 + start[3] * d0 + end[2] * v1 + end[3] * d1;
+        w1 = solve[0] * p + solve[1] * q;
+        s1 = solve[2] * p + solve[3] * q;
+      }
+      for (let i = 0, g = 2; i < order; i += 1, g += POWERS) next[i] += gamma[g] * w1 + gamma[g + 1] * s1;
+    }
     this.timeS = toS;
     this.readStates(regime);
     this.write(span, index, into + 2, w1, s1 / stepS);
@@ -228,53 +243,52 @@ export class Stepper {
   }
 
   /** v at the current time, at the start of a span. */
-  startV({ regime, constant, input }: Span): number {
-    const { settings, history } = this;
+  startV({ regime, constant, delayed, input }: Span): number {
+    const { history, deadTimeS, load } = this;
     this.readStates(regime);
     let w = 0;
-    if (input !== 'delayed') w = input;
+    if (!delayed) w = input;
     else {
-      history.after(this.timeS - settings.deadTimeS, 1e-6 * settings.baseS * 2 ** this.level);
-      w = history.value + settings.load;
+      history.after(this.timeS - deadTimeS, 1e-9 * deadTimeS);
+      w = history.value + load;
     }
-    return this.now[2] + regime.space.v.w * w + regime.space.v.ones[constant];
+    return this.now[2] + regime.direct[2] * w + regime.offsets[constant][2];
   }
 
-  private readStates({ space, dy, dv }: Regime): void {
-    const { now, z } = this;
-    now[0] = dot(space.y.z, z);
-    now[1] = dot(dy.z, z);
-    now[2] = dot(space.v.z, z);
-    now[3] = dot(dv.z, z);
+  private readStates({ rows }: Regime): void {
+    const { now, z, order } = this;
+    for (let k = 0, at = 0; k < 4; k += 1) {
+      let sum = 0;
+      for (let j = 0; j < order; j += 1, at += 1) sum += rows[at] * z[j];
+      now[k] = sum;
+    }
   }
 
   /** Signals at one end of a piece for an input w that changes by dw per second; `into` is the place in pairV. */
-  private write({ regime, constant, held }: Span, index: number, into: number, w: number, dw: number): void {
+  private write(span: Span, index: number, into: number, w: number, dw: number): void {
     const { trajectory, now, pairV } = this;
-    const { space, dy, dv } = regime;
-    const { y, v } = space;
-    const yValue = now[0] + y.w * w + y.ones[constant];
-    const ySlope = now[1] + dy.w * w + y.w * dw + dy.ones[constant];
-    const vValue = now[2] + v.w * w + v.ones[constant];
-    const vSlope = now[3] + dv.w * w + v.w * dw + dv.ones[constant];
-    pairV[into] = vValue;
-    pairV[into + 1] = vSlope;
-    const uValue = held === null ? vValue : held;
-    const uSlope = held === null ? vSlope : 0;
+    const { direct, offsets } = span.regime;
+    const offset = offsets[span.constant];
+    const { held } = span;
+    const isHeld = !Number.isNaN(held);
+    const y = now[0] + direct[0] * w + offset[0];
+    const dy = now[1] + direct[1] * w + direct[0] * dw + offset[1];
+    const v = now[2] + direct[2] * w + offset[2];
+    const dv = now[3] + direct[3] * w + direct[2] * dw + offset[3];
+    pairV[into] = v;
+    pairV[into + 1] = dv;
+    const u = isHeld ? held : v;
+    const du = isHeld ? 0 : dv;
     if ((into & 2) === 0) {
-      trajectory.y0[index] = yValue;
-      trajectory.dy0[index] = ySlope;
-      trajectory.u0[index] = uValue;
-      trajectory.du0[index] = uSlope;
+      trajectory.y0[index] = y;
+      trajectory.dy0[index] = dy;
+      trajectory.u0[index] = u;
+      trajectory.du0[index] = du;
     } else {
-      trajectory.y1[index] = yValue;
-      trajectory.dy1[index] = ySlope;
-      trajectory.u1[index] = uValue;
-      trajectory.du1[index] = uSlope;
+      trajectory.y1[index] = y;
+      trajectory.dy1[index] = dy;
+      trajectory.u1[index] = u;
+      trajectory.du1[index] = du;
     }
   }
-}
-
-function value(reading: Reading, z: Float64Array, constant: number): number {
-  return dot(reading.z, z) + reading.ones[constant];
 }

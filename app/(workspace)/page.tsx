@@ -40,7 +40,7 @@ export default async function BoardPage() {
     <>
       <PageHead path={organisation.name} title="Board" />
       <div className="grid grid-cols-1 gap-x-9 gap-y-8 pt-6 xl:grid-cols-[minmax(0,5fr)_minmax(0,3fr)]">
-        <div className="grid min-w-0 content-start gap-8">
+        <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] content-start gap-8">
           <section aria-labelledby="waits">
             <header className="mb-1 flex items-baseline justify-between">
               <h2 id="waits" className="text-lg">

@@ -12,6 +12,21 @@ export type ReadBack =
 /** Share by which a device may round what is entered and still hold the value that was meant. */
 const ROUNDING = 0.005;
 
+/** Factors between the units that get mixed up: minutes, hours, milliseconds and their inverses. */
+const UNIT_FACTORS = [60, 1 / 60, 3600, 1 / 3600, 1000, 1 / 1000];
+
+/** A person types "0.33" for a third of a minute: the exact mix-up that rounds to what was typed, or the value itself. */
+function meant(value: number, expected: number, text: string): number {
+  const decimals = /[.,](\d+)/.exec(text)?.[1].length ?? 0;
+  const candidate = UNIT_FACTORS.map((factor) => expected * factor).find(
+    (mixed) =>
+      value !== 0 &&
+      Math.abs(mixed - value) <= 0.5 * 10 ** -decimals &&
+      Math.abs(mixed - value) < 0.1 * Math.abs(value),
+  );
+  return candidate ?? value;
+}
+
 /**
  * Compares a typed value with the one expected: the same, the same within the device's rounding, or different —
  * and then, where it is a known mix-up of units or rows, which one.
@@ -32,7 +47,7 @@ export function readBack(
   const shown = `${formatNumber(value, { significant: 7 })}${row.unit ? ` ${row.unit}` : ''}`;
   if (off <= ROUNDING)
     return { kind: 'rounded', value, message: `${shown}: the same within the device’s rounding.` };
-  const mixUp = explainMixUp(value, expected, { others });
+  const mixUp = explainMixUp(meant(value, expected, text), expected, { others });
   return {
     kind: 'different',
     value,

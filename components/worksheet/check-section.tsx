@@ -18,7 +18,8 @@ const BodePlots = dynamic(() => import('./bode-plots').then((module) => module.B
 /** What the verdict says, first of all whether the loop is stable. */
 export function VerdictNotice({ preview }: { preview: Preview | null }) {
   const unstable = preview?.cases.find(({ check }) => check && !check.stable);
-  if (!preview || (!preview.verdict && !unstable))
+  if (!preview) return <Notice tone="plain" title="Working out the check …" live />;
+  if (!preview.verdict && !unstable)
     return (
       <Notice tone="plain" title="Nothing to check yet">
         A plant and gains are needed first.
@@ -54,6 +55,7 @@ export function VerdictNotice({ preview }: { preview: Preview | null }) {
 export function VerdictLine({ preview }: { preview: Preview | null }) {
   const unstable = preview?.cases.some(({ check }) => check && !check.stable) ?? false;
   const verdict = preview?.verdict?.verdict;
+  if (!preview) return <Notice tone="plain" title="Working out the check …" />;
   if (unstable) return <Notice tone="bad" title="Unstable loop" />;
   if (!verdict || verdict.pass === null)
     return <Notice tone="plain" title={verdict ? 'Stable, no limit stated' : 'Nothing to check yet'} />;

@@ -1,4 +1,5 @@
 import { migrateDatabase } from '../db/migrate';
 import { environment } from '../lib/env';
+import { tell } from './lib/tell';
 
-await migrateDatabase(environment().DATABASE_URL);
+await tell(() => migrateDatabase(environment().DATABASE_URL));

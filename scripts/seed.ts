@@ -1,15 +1,26 @@
-import { count, like } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import { closeDatabase } from '../db/client';
 import { persons } from '../db/schema';
 import { seedDemo } from '../db/seed';
 import { withSystem } from '../db/tx';
+import { passwordMatches } from '../lib/auth/passwords';
 import { environment } from '../lib/env';
+import { tell } from './lib/tell';
 
-const { DEMO, DEMO_PASSWORD } = environment();
+const ONE_OF_THEM = 'engineer@brackwater.example';
 
-if (DEMO === 'on') await seedDemo({ password: DEMO_PASSWORD });
-const [demo] = await withSystem((tx) =>
-  tx.select({ people: count() }).from(persons).where(like(persons.email, '%@brackwater.example')),
-);
-if (demo.people > 0) process.stdout.write('the demo is there\n');
+/** Whether the demo people are there, and whether DEMO_PASSWORD lets them in. */
+async function demoState(password: string): Promise<'none' | 'known' | 'changed'> {
+  const [person] = await withSystem((tx) =>
+    tx.select({ hash: persons.passwordHash }).from(persons).where(eq(persons.email, ONE_OF_THEM)),
+  );
+  if (!person) return 'none';
+  return (await passwordMatches(password, person.hash)) ? 'known' : 'changed';
+}
+
+await tell(async () => {
+  const { DEMO, DEMO_PASSWORD } = environment();
+  if (DEMO === 'on') await seedDemo({ password: DEMO_PASSWORD });
+  return demoState(DEMO_PASSWORD);
+});
 await closeDatabase();

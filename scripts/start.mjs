@@ -3,13 +3,23 @@ import { randomBytes } from 'node:crypto';
 import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { installPackages } from './lib/packages.mjs';
-import { portIsFree, root } from './lib/processes.mjs';
+import { portObjection } from './lib/ports.mjs';
+import { root } from './lib/processes.mjs';
 import { run, say, Sentence } from './lib/say.mjs';
+import { stopSignal } from './lib/stop-signal.mjs';
 
-function wantedPort() {
+async function wantedPort() {
   const port = Number(process.env.PORT || 3000);
-  if (Number.isInteger(port) && port > 0 && port < 65_536) return port;
-  throw new Sentence(`PORT must be a number from 1 to 65535, not “${process.env.PORT}”.`);
+  if (!Number.isInteger(port) || port < 1 || port > 65_535)
+    throw new Sentence(`PORT must be a whole number from 1 to 65535, not “${process.env.PORT}”.`);
+  const objection = await portObjection(port);
+  if (objection === 'EACCES')
+    throw new Sentence(`Port ${port} is for root alone; choose one from 1024 on: PORT=3001 npm start.`);
+  if (objection)
+    throw new Sentence(
+      `Port ${port} is in use. Stop what runs there, or choose another: PORT=${port === 3001 ? 3002 : 3001} npm start.`,
+    );
+  return String(port);
 }
 
 /** Seals the session cookies; made once and kept, so that a restart signs nobody out. */
@@ -23,20 +33,31 @@ function sessionSecret() {
   return readFileSync(file, 'utf8').trim();
 }
 
-function greet(port, hasDemo) {
+function greet(port, demo) {
   say(`\nFettle serves at http://127.0.0.1:${port}   (Ctrl-C stops it)`);
-  if (!hasDemo) return;
-  say(`Demo sign-ins, password “${process.env.DEMO_PASSWORD || 'brackwater-demo'}”:`);
+  if (demo === 'none') return;
+  const password = process.env.DEMO_PASSWORD || 'brackwater-demo';
+  say(`Demo sign-ins, password ${demo === 'known' ? `“${password}”` : 'as it was set before'}:`);
   for (const name of ['engineer', 'approver', 'technician', 'admin']) say(`  ${name}@brackwater.example`);
   say('  engineer@northgate.example   (another organisation)');
 }
 
+/** Waits until asked to stop, or until one of the programs ends by itself, which is a failure. */
+function untilEnd([web, worker]) {
+  return new Promise((resolve) => {
+    stopSignal.addEventListener('abort', () => resolve(0));
+    if (stopSignal.aborted) resolve(0);
+    for (const [name, child] of Object.entries({ web, worker }))
+      child.once('exit', (code, signal) => {
+        if (stopSignal.aborted) return;
+        say(`The ${name} ended by itself (${signal ?? `code ${code}`}); stopping the rest.`);
+        resolve(1);
+      });
+  });
+}
+
 async function main() {
-  const port = wantedPort();
-  if (!(await portIsFree(port)))
-    throw new Sentence(
-      `Port ${port} is in use. Stop what runs there, or choose another: PORT=3001 npm start.`,
-    );
+  const port = await wantedPort();
   await installPackages();
   const { startCluster } = await import('./lib/cluster.mjs');
   const { checkUrl, migrate, seed } = await import('./lib/database.mjs');
@@ -47,39 +68,23 @@ async function main() {
   if (given) await checkUrl(given);
   const cluster = given ? null : await startCluster();
   let served = null;
-  const stopAll = async () => {
-    await served?.stop();
-    await cluster?.stop();
-  };
   try {
     const env = {
       ...process.env,
       DATABASE_URL: given || cluster.url,
       SESSION_SECRET: sessionSecret(),
-      PORT: String(port),
+      PORT: port,
     };
     await migrate(env);
-    const hasDemo = await seed(env);
+    const demo = await seed(env);
     await build();
-    served = await serve(env, port);
-    if (!served) throw new Sentence('The web server did not come up; its own message stands above.');
-    greet(port, hasDemo);
+    served = await serve(env);
+    greet(port, demo);
     return await untilEnd(served.children);
   } finally {
-    await stopAll();
+    await served?.stop();
+    await cluster?.stop();
   }
-}
-
-/** Waits for Ctrl-C, or for one of the programs to end by itself, which is a failure. */
-function untilEnd(children) {
-  return new Promise((resolve) => {
-    for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.once(signal, () => resolve(0));
-    for (const child of children)
-      child.once('close', (code) => {
-        say(`A part of Fettle ended by itself (code ${code}); stopping the rest.`);
-        resolve(1);
-      });
-  });
 }
 
 await run(main);

@@ -1,40 +1,44 @@
 // What CI runs: every suite, then the static checks. Counts both into one closing line.
-import { mkdtempSync, readdirSync, cpSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
+import { cpSync, mkdirSync, mkdtempSync, readdirSync, rmSync } from 'node:fs';
+import { join, relative } from 'node:path';
 import { installPackages } from './lib/packages.mjs';
-import { command, root } from './lib/processes.mjs';
+import { command, packageCommand, root } from './lib/processes.mjs';
 import { run, say } from './lib/say.mjs';
+import { runSuites, SUITES } from './lib/suites.mjs';
 
+/** Name of a check, and the script of package.json that does it. */
 const CHECKS = {
-  lint: ['npm', ['run', '--silent', 'lint']],
-  format: ['npm', ['run', '--silent', 'format:check']],
-  types: ['npm', ['run', '--silent', 'typecheck']],
-  'dead code': ['npm', ['run', '--silent', 'deadcode']],
-  imports: ['npm', ['run', '--silent', 'imports']],
+  lint: 'lint',
+  format: 'format:check',
+  types: 'typecheck',
+  'dead code': 'deadcode',
+  imports: 'imports',
 };
+
+async function script(name) {
+  const { code, output } = await command('npm', ['run', '--silent', name], { quiet: true });
+  if (code !== 0) say(output);
+  return code === 0;
+}
 
 /** The migrations must be those of the schema: drawing them up again may add nothing. */
 async function schemaDrift() {
-  const folder = mkdtempSync(join(tmpdir(), 'fettle-drift-'));
+  const data = join(root, '.data');
+  mkdirSync(data, { recursive: true });
+  const folder = mkdtempSync(join(data, 'drift-'));
   try {
-    const out = join(folder, 'migrations');
-    cpSync(join(root, 'db', 'migrations'), out, { recursive: true });
-    const before = readdirSync(out).length;
-    const args = [
-      'drizzle-kit',
-      'generate',
-      '--dialect',
-      'postgresql',
-      '--schema',
-      './db/schema/*.ts',
-      '--out',
-      out,
-    ];
-    const { code, output } = await command('npx', args, { quiet: true });
-    const clean = code === 0 && readdirSync(out).length === before;
-    if (!clean) say(output);
-    return clean;
+    cpSync(join(root, 'db', 'migrations'), folder, { recursive: true });
+    const before = readdirSync(folder).length;
+    // drizzle-kit takes a path from here only, not one from the root.
+    const args = ['generate', '--dialect=postgresql', '--schema=./db/schema/*.ts'];
+    const { code, output } = await packageCommand(
+      'drizzle-kit/bin.cjs',
+      [...args, `--out=./${relative(root, folder)}`],
+      { quiet: true },
+    );
+    const isClean = code === 0 && readdirSync(folder).length === before && /nothing to migrate/.test(output);
+    if (!isClean) say(output);
+    return isClean;
   } finally {
     rmSync(folder, { recursive: true, force: true });
   }
@@ -42,27 +46,14 @@ async function schemaDrift() {
 
 async function main() {
   await installPackages();
-  const tests = await command('npm', ['test', '--silent'], {
-    quiet: true,
-    stdio: ['ignore', 'pipe', 'inherit'],
-  });
-  process.stdout.write(tests.output);
-  const [, testsPassed = '0', testsFailed = '1'] =
-    /(\d+) passed, (\d+) failed\s*$/.exec(tests.output.trim()) ?? [];
-  let passed = Number(testsPassed);
-  let failed = Number(testsFailed);
-  if (tests.code !== 0 && failed === 0) failed = 1;
+  let { passed, failed } = await runSuites(SUITES);
   say('\n== static checks ==');
-  const outcomes = [];
-  for (const [name, [program, args]] of Object.entries(CHECKS)) {
-    const { code, output } = await command(program, args, { quiet: true });
-    if (code !== 0) say(output);
-    outcomes.push([name, code === 0]);
-  }
-  outcomes.push(['schema drift', await schemaDrift()]);
-  for (const [name, good] of outcomes) {
-    say(`${name}: ${good ? 'passed' : 'failed'}`);
-    if (good) passed += 1;
+  const outcomes = {};
+  for (const [name, does] of Object.entries(CHECKS)) outcomes[name] = await script(does);
+  outcomes['schema drift'] = await schemaDrift();
+  for (const [name, isGood] of Object.entries(outcomes)) {
+    say(`${name}: ${isGood ? 'as it should be' : 'WRONG, see above'}`);
+    if (isGood) passed += 1;
     else failed += 1;
   }
   say(`${passed} passed, ${failed} failed`);

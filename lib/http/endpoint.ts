@@ -6,7 +6,8 @@ import { log } from '../log';
 import { once } from './idempotency';
 import { encodeNumbers } from './numbers';
 import { problemResponse, unknownProblem } from './problem';
-import { readBody, schemaError } from './read-json';
+import { schemaError } from '../schemas/schema-error';
+import { readBody } from './read-json';
 
 export interface Call<Input> {
   readonly session: Session;

@@ -1,5 +1,4 @@
-import type { z } from 'zod';
-import { FettleError, type FieldError } from '../errors';
+import { FettleError } from '../errors';
 
 const LARGEST_BODY = 1_000_000;
 
@@ -18,18 +17,4 @@ export async function readBody(request: Request): Promise<{ text: string; json: 
   } catch {
     throw new FettleError('MALFORMED', 'The body is not JSON.');
   }
-}
-
-/** Malformed input is 400; a well-formed request that asks for the impossible (an improper plant, say) is 422. */
-export function schemaError(error: z.ZodError): FettleError {
-  const fields: FieldError[] = error.issues.map(({ path, message }) => ({
-    path: path.map(String).join('.'),
-    message,
-  }));
-  const impossible = error.issues.every(
-    (issue) => issue.code === 'custom' && issue.params?.impossible === true,
-  );
-  const [first] = fields;
-  const detail = first.path ? `${first.path}: ${first.message}` : first.message;
-  return new FettleError(impossible ? 'INVALID' : 'MALFORMED', detail, { fields });
 }

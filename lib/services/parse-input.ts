@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import { schemaError } from '../http/read-json';
+import { schemaError } from '../schemas/schema-error';
 
 /** Reads a service's input by its schema; the same errors whether it came from a form, a page or the API. */
 export function parseInput<Schema extends z.ZodType>(schema: Schema, input: unknown): z.output<Schema> {

@@ -1,15 +1,18 @@
 import { createHash } from 'node:crypto';
-import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
+import { existsSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { command, root } from './processes.mjs';
+import { packageCommand, root } from './processes.mjs';
 import { say, Sentence } from './say.mjs';
 
+/** All that the build reads; what a change of must lead to another build. */
 const SOURCES = [
   'app',
   'components',
   'db',
   'lib',
   'public',
+  'instrumentation.ts',
+  'proxy.ts',
   'package-lock.json',
   'next.config.mjs',
   'postcss.config.mjs',
@@ -19,6 +22,7 @@ const SOURCES = [
 const stampFile = join(root, '.next', 'fettle-stamp');
 
 function filesUnder(path) {
+  if (!existsSync(path)) return [];
   if (!statSync(path).isDirectory()) return [path];
   return readdirSync(path)
     .sort()
@@ -26,7 +30,7 @@ function filesUnder(path) {
 }
 
 function sourceHash() {
-  const hash = createHash('sha256');
+  const hash = createHash('sha256').update(process.version);
   for (const source of SOURCES)
     for (const file of filesUnder(join(root, source)))
       hash.update(file.slice(root.length)).update(readFileSync(file));
@@ -38,9 +42,9 @@ export async function build() {
   const wanted = sourceHash();
   if (existsSync(stampFile) && readFileSync(stampFile, 'utf8') === wanted) return;
   say('Building …');
-  const next = join(root, 'node_modules', 'next', 'dist', 'bin', 'next');
-  const env = { ...process.env, NEXT_TELEMETRY_DISABLED: '1' };
-  const { code, output } = await command(process.execPath, [next, 'build'], { quiet: true, env });
+  rmSync(stampFile, { force: true });
+  const env = { ...process.env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' };
+  const { code, output } = await packageCommand('next/dist/bin/next', ['build'], { quiet: true, env });
   if (code !== 0) throw new Sentence(`The build failed:\n${output.trim().split('\n').slice(-30).join('\n')}`);
   writeFileSync(stampFile, wanted);
 }

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { existsSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { command, root } from './processes.mjs';
 import { say, Sentence } from './say.mjs';
@@ -17,8 +17,12 @@ export async function installPackages() {
   const wanted = lockfileHash();
   if (existsSync(stampFile) && readFileSync(stampFile, 'utf8') === wanted) return;
   say('Installing the packages of the lockfile …');
-  const { code } = await command('npm', ['ci', '--no-audit', '--no-fund']);
-  if (code !== 0) throw new Sentence('The packages could not be installed; npm’s own message stands above.');
+  rmSync(stampFile, { force: true });
+  // The build checks types, so it needs the development packages too, whatever NODE_ENV says.
+  const args = ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error'];
+  const { code } = await command('npm', args);
+  if (code !== 0)
+    throw new Sentence('The packages of package-lock.json could not be installed; the reason stands above.');
   writeFileSync(stampFile, wanted);
 }
 
@@ -29,13 +33,15 @@ export async function installDebian(name, why) {
       `${why}, and installing it needs root: run “apt-get install ${name}” as root once, then start again.`,
     );
   say(`Installing Debian’s ${name} …`);
-  const options = { env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' }, quiet: true };
+  // Shielded: an installation that is torn in the middle leaves the machine's package list broken.
+  const options = {
+    env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' },
+    quiet: true,
+    shielded: true,
+  };
   await command('apt-get', ['update', '-qq'], options);
-  const { code, output } = await command(
-    'apt-get',
-    ['install', '-y', '-qq', '--no-install-recommends', name],
-    options,
-  );
+  const args = ['install', '-y', '-qq', '--no-install-recommends', name];
+  const { code, output } = await command('apt-get', args, options);
   if (code === 0) return;
   const last = output.trim().split('\n').at(-1);
   throw new Sentence(`${why}, and Debian’s ${name} could not be installed: ${last}`);

@@ -1,68 +1,58 @@
 import { spawn } from 'node:child_process';
-import { createServer } from 'node:net';
+import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { stopSignal } from './stop-signal.mjs';
 
 export const root = fileURLToPath(new URL('../..', import.meta.url)).replace(/\/$/, '');
 
-/** Runs a command to its end. `quiet` keeps its output and hands it back. */
-export function command(program, args, { quiet = false, ...options } = {}) {
-  return new Promise((resolve) => {
-    const child = spawn(program, args, { cwd: root, stdio: quiet ? 'pipe' : 'inherit', ...options });
-    let output = '';
-    child.stdout?.on('data', (part) => (output += part));
-    child.stderr?.on('data', (part) => (output += part));
-    child.on('error', (error) => resolve({ code: 127, output: String(error) }));
-    child.on('close', (code, signal) => resolve({ code: code ?? (signal ? 1 : 0), output }));
-  });
-}
+const STOP_WITHIN_MS = 8000;
 
-/** Starts a program that goes on running, in a group of its own so that a Ctrl-C reaches it through us alone. */
-export function start(program, args, options = {}) {
-  return spawn(program, args, { cwd: root, stdio: 'inherit', detached: true, ...options });
-}
-
-/** Asks a program to end, and ends it after a while. */
-export async function stop(child) {
-  if (!child || child.exitCode !== null || child.signalCode !== null) return;
-  const ended = new Promise((resolve) => child.once('close', resolve));
-  child.kill('SIGTERM');
-  const late = setTimeout(() => child.kill('SIGKILL'), 8000);
-  await ended;
-  clearTimeout(late);
-}
-
-export function portIsFree(port) {
-  return new Promise((resolve) => {
-    const probe = createServer();
-    probe.once('error', () => resolve(false));
-    probe.listen(port, '127.0.0.1', () => probe.close(() => resolve(true)));
-  });
-}
-
-/** A port that nobody listens on: the wanted one if it is free, else any. */
-export function freePort(wanted = 0) {
+/**
+ * Runs a command to its end. A request to stop ends it and throws.
+ *
+ * @param options those of `spawn`, and
+ *   quiet: keep the output and hand it back instead of showing it;
+ *   shielded: a request to stop neither reaches nor prevents it (it starts or ends something that must not be torn)
+ * @returns exit code (127 when there is no such program) and the output, empty unless quiet
+ */
+export function command(program, args, { quiet = false, shielded = false, ...options } = {}) {
   return new Promise((resolve, reject) => {
-    const probe = createServer();
-    probe.once('error', (error) => (wanted ? freePort(0).then(resolve, reject) : reject(error)));
-    probe.listen(wanted, '127.0.0.1', () => {
-      const { port } = probe.address();
-      probe.close(() => resolve(port));
+    if (!shielded) stopSignal.throwIfAborted();
+    const own = shielded ? { detached: true } : { signal: stopSignal };
+    const stdio = ['ignore', ...(quiet ? ['pipe', 'pipe'] : ['inherit', 'inherit'])];
+    const child = spawn(program, args, { cwd: root, stdio, ...own, ...options });
+    let output = '';
+    for (const stream of [child.stdout, child.stderr]) stream?.on('data', (part) => (output += part));
+    child.on('error', (error) => {
+      if (error.code !== 'ABORT_ERR') resolve({ code: 127, output: error.message });
+    });
+    child.on('close', (code) => {
+      if (stopSignal.aborted && !shielded) reject(stopSignal.reason);
+      else resolve({ code: code ?? 1, output });
     });
   });
 }
 
-export const sleep = (milliseconds) => new Promise((resolve) => setTimeout(resolve, milliseconds));
+/** Runs a program of an installed package; straight, since a wrapper would not hand a request to stop on. */
+export function packageCommand(file, args, options) {
+  return command(process.execPath, [join(root, 'node_modules', file), ...args], options);
+}
 
-/** Waits until an address answers with something better than a server error. */
-export async function answers(url, seconds, stillRuns = () => true) {
-  for (let i = 0; i < seconds * 4 && stillRuns(); i += 1) {
-    try {
-      const response = await fetch(url, { redirect: 'manual', signal: AbortSignal.timeout(3000) });
-      if (response.status < 500) return true;
-    } catch {
-      // not yet
-    }
-    await sleep(250);
-  }
-  return false;
+/** Starts a program that goes on running. */
+export function start(program, args, options = {}) {
+  return spawn(program, args, { cwd: root, stdio: 'inherit', ...options });
+}
+
+export function hasEnded(child) {
+  return child.exitCode !== null || child.signalCode !== null;
+}
+
+/** Asks a program to end, and ends it after a while. */
+export async function stop(child) {
+  if (hasEnded(child)) return;
+  const ended = new Promise((resolve) => child.once('exit', resolve));
+  child.kill('SIGTERM');
+  const late = setTimeout(() => child.kill('SIGKILL'), STOP_WITHIN_MS);
+  await ended;
+  clearTimeout(late);
 }

@@ -1,23 +1,36 @@
 import { join } from 'node:path';
-import { answers, root, start, stop } from './processes.mjs';
+import { answers } from './ports.mjs';
+import { hasEnded, root, start, stop } from './processes.mjs';
+import { Sentence } from './say.mjs';
 
 /** A ceiling for the web process' heap: at rest the whole process then stays well under 350 MB. */
 const HEAP_MB = 220;
+const UP_WITHIN_S = 60;
 
-/** Starts web and worker, and waits until the web answers. Returns null when it doesn't. */
-export async function serve(env, port, stdio = 'inherit') {
-  const next = join(root, 'node_modules', 'next', 'dist', 'bin', 'next');
-  const shared = { ...env, PORT: String(port), NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' };
-  const web = start(
-    process.execPath,
-    [`--max-old-space-size=${HEAP_MB}`, next, 'start', '-H', '127.0.0.1', '-p', String(port)],
-    { env: shared, stdio },
-  );
-  const worker = start(process.execPath, ['--import', 'tsx', 'worker/main.ts'], { env: shared, stdio });
+/**
+ * Starts web and worker, and waits until the web answers.
+ *
+ * @param env must be complete: addresses, secrets, PORT
+ * @param stdio where their output goes, as in `spawn`
+ * @returns the programs that run, and how to stop them
+ */
+export async function serve(env, stdio = 'inherit') {
+  const next = join(root, 'node_modules/next/dist/bin/next');
+  const options = { env: { ...env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' }, stdio };
+  const heap = `--max-old-space-size=${HEAP_MB}`;
+  const web = start(process.execPath, [heap, next, 'start', '-H', '127.0.0.1', '-p', env.PORT], options);
+  const worker = start(process.execPath, ['--import', 'tsx', 'worker/main.ts'], options);
   const children = [web, worker];
-  const up = await answers(`http://127.0.0.1:${port}/api/health`, 60, () => web.exitCode === null);
   const end = () => Promise.all(children.map(stop));
-  if (up) return { children, stop: end };
-  await end();
-  return null;
+  const run = () => !children.some(hasEnded);
+  try {
+    if (!(await answers(`http://127.0.0.1:${env.PORT}/api/health`, UP_WITHIN_S, run)))
+      throw new Sentence(
+        `The ${hasEnded(worker) ? 'worker' : 'web server'} did not come up; its own message stands above.`,
+      );
+  } catch (error) {
+    await end();
+    throw error;
+  }
+  return { children, stop: end };
 }

@@ -1,67 +1,119 @@
 import { ok, refuse } from '../../result';
-import { placeOf, type PlainText } from './characters';
-import { commaMeaning, readList, readSingle } from './numbers';
+import { placeOf, sliceOf, type PlainText } from './characters';
+import { commaMeaning, readList, readTimeS } from './numbers';
+import { sectionFor, sectionsOf } from './sections';
 import type { RawPlant, TextResult } from './types';
 
-const DELAY =
-  /[,;\s]*\b(?:delay|dead[\s_-]?time|theta|θ)\s*[:=]?\s*([+-]?[\d.,]+(?:e[+-]?\d+)?)\s*(?:s(?:ec)?\b)?\s*$/iu;
-const LABELLED =
-  /^\s*(?:num|numerator|n|b)\s*[:=]\s*([\s\S]*?)[,;\s/]*\b(?:den|denominator|d|a)\s*[:=]\s*([\s\S]*)$/i;
+const LABEL =
+  /(?<![\p{L}\d])((?:num|numerator|den|denominator|delay|dead[\s_-]?time|theta|θ)(?![\p{L}\d])|[bnad](?=\s*[:=]))\s*[:=]?/giu;
 const RATIO = /^\s*\[([^[\]]*)\]\s*[/,;]?\s*\[([^[\]]*)\]\s*$/;
-const NUMBERS_ONLY = /^[\s\d.,;eE+-]+$/;
+const NUMBERS_ONLY = /^[\s\d.,;eE+-]*\d[\s\d.,;eE+-]*$/;
+const ONE_LIST = /^\s*\[[^[\]]*\]\s*$/;
+const SEVERAL_NUMBERS = /[\d.]\s*[,;\s]\s*[+-]?[\d.]/;
 
-interface Part {
-  readonly text: string;
-  readonly at: number;
+type Kind = 'num' | 'den' | 'delay';
+
+function kindOf(word: string): Kind {
+  const first = word.toLowerCase();
+  if (/^(num|n$|b$)/.test(first)) return 'num';
+  return /^(den|d$|a$)/.test(first) ? 'den' : 'delay';
 }
 
-/** Cuts the text into its two lists; null when it isn't two lists at all. */
-function twoLists(text: string): [Part, Part] | null {
-  const labelled = LABELLED.exec(text);
-  if (labelled) return [bare(text, labelled[1], 0), bare(text, labelled[2], labelled[1].length)];
+/** A list without the one pair of brackets around it, if there is one. */
+function unbracketed(list: PlainText): PlainText {
+  return { ...list, text: list.text.replace(/^(\s*)[[(]([^[\]()]*)[\])](\s*)$/, '$1 $2 $3') };
+}
+
+/** `num: 2 / den: 10 1` */
+function withoutSlash(list: PlainText): PlainText {
+  return sliceOf(list, 0, list.text.replace(/\s*\/$/, '').length);
+}
+
+/** Cuts a text without labels into its two lists; null when it isn't two lists. */
+function twoLists(source: PlainText): [PlainText, PlainText] | null {
+  const { text } = source;
   const ratio = RATIO.exec(text);
   if (ratio) {
-    const first = text.indexOf('[') + 1;
-    return [
-      { text: ratio[1], at: first },
-      { text: ratio[2], at: text.indexOf('[', first) + 1 },
-    ];
+    const open = text.indexOf('[') + 1;
+    const second = text.indexOf('[', open) + 1;
+    return [sliceOf(source, open, open + ratio[1].length), sliceOf(source, second, second + ratio[2].length)];
   }
-  const lines = text.split('\n').filter((line) => line.trim() !== '');
-  if (lines.length === 2 && lines.every((line) => NUMBERS_ONLY.test(bareList(line))))
-    return [bare(text, lines[0], 0), bare(text, lines[1], text.indexOf(lines[0]) + lines[0].length)];
-  const halves = text.split('/');
-  const longEnough = halves.some((half) => /[\d.]\s*[,;\s]\s*[+-]?[\d.]/.test(half.trim()));
-  if (
-    halves.length === 2 &&
-    longEnough &&
-    halves.every((half) => NUMBERS_ONLY.test(bareList(half)) && half.trim() !== '')
-  )
-    return [bare(text, halves[0], 0), bare(text, halves[1], halves[0].length + 1)];
-  return null;
+  const cut = /^[^/]*\/[^/]*$/.test(text) ? text.indexOf('/') : lineBreak(text);
+  if (cut < 0) return null;
+  const halves: [PlainText, PlainText] = [
+    unbracketed(sliceOf(source, 0, cut)),
+    unbracketed(sliceOf(source, cut + 1)),
+  ];
+  const lists = halves.every((half) => NUMBERS_ONLY.test(half.text));
+  const aFraction = text[cut] === '/' && !halves.some((half) => SEVERAL_NUMBERS.test(half.text.trim()));
+  return lists && !aFraction ? halves : null;
 }
 
-function bareList(list: string): string {
-  return list.replace(/[[\]()]/g, ' ');
+/** The line break of a text of two lines; -1 when there are more or fewer. */
+function lineBreak(text: string): number {
+  return /^\s*\S[^\n]*\n\s*\S[^\n]*\s*$/.test(text) ? text.indexOf('\n', text.search(/\S/)) : -1;
 }
 
-function bare(text: string, part: string, after: number): Part {
-  return { text: bareList(part), at: Math.max(0, text.indexOf(part, after)) };
+function readLists(num: PlainText, den: PlainText): TextResult<RawPlant> {
+  const commas = commaMeaning([num.text, den.text]);
+  const top = readList(num, commas);
+  if (!top.ok) return top;
+  const bottom = readList(den, commas);
+  if (!bottom.ok) return bottom;
+  const places = {
+    num: placeOf(num, num.text.search(/\S/)),
+    den: placeOf(den, den.text.search(/\S/)),
+  };
+  return ok({ num: top.value, den: bottom.value, deadTimeS: 0, places });
 }
 
-/** Two coefficient lists in descending powers, and a dead time after them if there is one; null when it is no such text. */
+/** One list is no plant; the more so when it can't be told what it holds. */
+function oneList(source: PlainText): TextResult<RawPlant> {
+  const list = unbracketed(source);
+  const read = readList(list, commaMeaning([list.text]));
+  if (!read.ok) return read;
+  return refuse(
+    'SYNTAX',
+    'The denominator is missing. Write both lists: [2] / [10 1].',
+    placeOf(source, source.text.trimEnd().length),
+  );
+}
+
+/** Whether a text labels a numerator or a denominator. */
+export function looksLabelled(text: string): boolean {
+  return (
+    [...text.matchAll(LABEL)].some(({ 1: word }) => /^(num|den)/i.test(word)) ||
+    /^\s*[bn]\s*[:=][^]*\b[ad]\s*[:=]/i.test(text)
+  );
+}
+
+/** `num: 2420; den: 1 118.8 1936; delay: 3`, in any order. */
+export function readLabelled(source: PlainText): TextResult<RawPlant> {
+  const cut = sectionsOf(source, LABEL, kindOf, 'num:, den: and delay:');
+  if (!cut.ok) return cut;
+  const num = sectionFor(cut.value, 'num');
+  const den = sectionFor(cut.value, 'den');
+  if (!num || !den)
+    return refuse('SYNTAX', `The ${num ? 'denominator' : 'numerator'} is missing. Write num: 2  den: 10 1.`);
+  const empty = [num, den].find(({ part }) => part.text.trim() === '');
+  if (empty)
+    return refuse(
+      'EMPTY',
+      `There are no numbers behind “${empty.label}”. Write num: 2  den: 10 1.`,
+      empty.labelPlace,
+    );
+  const lists = readLists(unbracketed(withoutSlash(num.part)), unbracketed(den.part));
+  const delay = sectionFor(cut.value, 'delay');
+  if (!lists.ok || !delay) return lists;
+  const deadTimeS = readTimeS(delay.part);
+  if (!deadTimeS.ok) return deadTimeS;
+  const places = { ...lists.value.places, deadTime: delay.labelPlace };
+  return ok({ ...lists.value, deadTimeS: deadTimeS.value, places });
+}
+
+/** `[2420] / [1 118.8 1936]` or two lines, in descending powers of s; null when the text is no such thing. */
 export function readCoefficients(source: PlainText): TextResult<RawPlant> | null {
-  const delay = DELAY.exec(source.text);
-  const body = delay ? source.text.slice(0, delay.index) : source.text;
-  const lists = twoLists(body);
-  if (!lists) return null;
-  const commas = commaMeaning(lists.map(({ text }) => text));
-  const read = lists.map(({ text, at }) => readList(text, commas, at));
-  for (const list of read) {
-    if (list.ok) continue;
-    return refuse(list.code, list.message, list.at === undefined ? undefined : placeOf(source, list.at));
-  }
-  const [num, den] = read.map((list) => (list.ok ? list.value : []));
-  const deadTime = delay ? readSingle(delay[1], delay.index) : ok(0);
-  return deadTime.ok ? ok({ num, den, deadTimeS: deadTime.value }) : deadTime;
+  const lists = twoLists(source);
+  if (lists) return readLists(...lists);
+  return ONE_LIST.test(source.text) ? oneList(source) : null;
 }

@@ -1,19 +1,14 @@
 import { ok, refuse } from '../../result';
-import { multiply } from '../polynomial';
-import { placeOf, type PlainText } from './characters';
-import { readSingle } from './numbers';
-import type { RawPlant, TextResult } from './types';
+import type { PlainText } from './characters';
+import { monic, readRoots, type Root } from './complex-roots';
+import { commaMeaning, readSingle, readTimeS } from './numbers';
+import { sectionFor, sectionsOf } from './sections';
+import { HIGHEST_ORDER, type RawPlant, type TextResult } from './types';
 
-const LABEL = /\b(gain|k|zeros?|z|poles?|p|delay|dead[\s_-]?time|theta|θ)\s*[:=]?\s*(?=[[\s\d+.-]|none|$)/giu;
-const COMPLEX =
-  /^([+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)?(?:(±|[+-])?((?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)?[ij])?$/i;
+const LABEL =
+  /(?<![\p{L}\d_])(gain|k|zeros?|z|poles?|p|delay|dead[\s_-]?time|theta|θ)(?![\p{L}\d_])\s*[:=]?/giu;
 
 type Kind = 'gain' | 'zeros' | 'poles' | 'delay';
-
-export interface Complex {
-  readonly re: number;
-  readonly im: number;
-}
 
 function kindOf(label: string): Kind {
   const word = label.toLowerCase();
@@ -22,91 +17,51 @@ function kindOf(label: string): Kind {
   return word === 'gain' || word === 'k' ? 'gain' : 'delay';
 }
 
-/** Whether the text states poles by that name. */
+/** Whether a text names zeros or poles. */
 export function looksLikeGainZerosPoles(text: string): boolean {
-  return /(^|[\s;,])(poles?\b|p\s*[:=]\s*\[)/i.test(text);
-}
-
-function readRoot(token: string, at: number): TextResult<Complex[]> {
-  const match = COMPLEX.exec(token);
-  if (!match || token === '')
-    return refuse('SYNTAX', `“${token.slice(0, 30)}” is not a real or complex number.`, at);
-  const imaginary = /[ij]$/i.test(token);
-  const re = match[1] === undefined ? 0 : Number(match[1]);
-  if (!imaginary) return ok([{ re, im: 0 }]);
-  const size = match[3] === undefined ? 1 : Number(match[3]);
-  if (match[2] === '±')
-    return ok([
-      { re, im: size },
-      { re, im: -size },
-    ]);
-  return ok([{ re, im: match[2] === '-' ? -size : size }]);
-}
-
-function readRoots(text: string, at: number): TextResult<Complex[]> {
-  const inside = text.replace(/[[\]()]/g, ' ').replace(/\s*(±)\s*/g, '$1');
-  if (/^\s*(none)?[\s,;]*$/i.test(inside)) return ok([]);
-  const roots: Complex[] = [];
-  for (const token of inside.split(/[,;\s]+/).filter(Boolean)) {
-    const read = readRoot(token, at);
-    if (!read.ok) return read;
-    roots.push(...read.value);
-  }
-  return ok(roots);
-}
-
-/** The monic polynomial with these roots; complex ones must come in conjugate pairs. */
-export function monic(roots: readonly Complex[]): number[] | null {
-  const left = [...roots];
-  let polynomial = [1];
-  while (left.length > 0) {
-    const { re, im } = left.pop() as Complex;
-    if (im === 0) {
-      polynomial = multiply(polynomial, [1, -re]);
-      continue;
-    }
-    const partner = left.findIndex((other) => other.re === re && other.im === -im);
-    if (partner < 0) return null;
-    left.splice(partner, 1);
-    polynomial = multiply(polynomial, [1, -2 * re, re * re + im * im]);
-  }
-  return polynomial;
+  return /(?<![\p{L}\d_])((pole|zero)s?(?![\p{L}\d_])|[pz]\s*[:=])/iu.test(text);
 }
 
 /** The plant gain·Π(s − z)/Π(s − p)·e^(-θ s); the gain is the factor before the monic ratio, not the steady gain. */
 export function plantOfRoots(
   gain: number,
-  zeros: readonly Complex[],
-  poles: readonly Complex[],
+  zeros: readonly Root[],
+  poles: readonly Root[],
   deadTimeS: number,
 ): TextResult<RawPlant> {
+  if (Math.max(zeros.length, poles.length) > HIGHEST_ORDER)
+    return refuse(
+      'ORDER_TOO_HIGH',
+      `There are ${Math.max(zeros.length, poles.length)} zeros or poles; up to ${HIGHEST_ORDER} can be handled.`,
+    );
   const num = monic(zeros);
+  if (!num.ok) return num;
   const den = monic(poles);
-  if (!num || !den)
-    return refuse('SYNTAX', 'Complex zeros and poles must come in pairs a ± bi; one has no partner.');
-  return ok({ num: num.map((c) => c * gain), den, deadTimeS });
+  return den.ok ? ok({ num: num.value.map((c) => c * gain), den: den.value, deadTimeS }) : den;
 }
 
-/** `gain 2; zeros -1; poles -2 -3±4i; delay 0.5`. */
+/** `gain 2; zeros -1; poles -2 -3±4i; delay 0.5`, in any order. */
 export function readGainZerosPoles(source: PlainText): TextResult<RawPlant> {
-  const labels = [...source.text.matchAll(LABEL)];
-  const parts: Partial<Record<Kind, { text: string; at: number }>> = {};
-  for (const [index, match] of labels.entries()) {
-    const kind = kindOf(match[1]);
-    const from = match.index + match[0].length;
-    const at = placeOf(source, match.index);
-    if (parts[kind]) return refuse('AMBIGUOUS', `“${match[1]}” is stated twice.`, at);
-    parts[kind] = { text: source.text.slice(from, labels[index + 1]?.index), at };
-  }
-  if (!parts.poles) return refuse('SYNTAX', 'The poles are missing.');
-  const zeros = readRoots(parts.zeros?.text ?? '', parts.zeros?.at ?? 0);
-  const poles = readRoots(parts.poles.text, parts.poles.at);
-  const single = (part: { text: string; at: number } | undefined, missing: number) =>
-    part ? readSingle(part.text.replace(/[[\],;\s]/g, '').replace(/s$/, ''), part.at) : ok(missing);
-  const gain = single(parts.gain, 1);
-  const delay = single(parts.delay, 0);
+  const cut = sectionsOf(source, LABEL, kindOf, 'gain, zeros, poles and delay');
+  if (!cut.ok) return cut;
+  const section = (kind: Kind) => sectionFor(cut.value, kind);
+  const nothing: PlainText = { text: '', places: [] };
+  const poleList = section('poles');
+  if (!poleList) return refuse('SYNTAX', 'The poles are missing. Write poles none for a plant without any.');
+  const zeroPart = section('zeros')?.part ?? nothing;
+  const commas = commaMeaning([zeroPart.text, poleList.part.text]);
+  const zeros = readRoots(zeroPart, commas);
   if (!zeros.ok) return zeros;
+  const poles = readRoots(poleList.part, commas);
   if (!poles.ok) return poles;
+  const gainSection = section('gain');
+  const gain = gainSection ? readSingle(gainSection.part) : ok(1);
   if (!gain.ok) return gain;
-  return delay.ok ? plantOfRoots(gain.value, zeros.value, poles.value, delay.value) : delay;
+  const delay = section('delay');
+  const deadTimeS = delay ? readTimeS(delay.part) : ok(0);
+  if (!deadTimeS.ok) return deadTimeS;
+  const plant = plantOfRoots(gain.value, zeros.value, poles.value, deadTimeS.value);
+  if (!plant.ok) return plant;
+  const places = { num: section('zeros')?.labelPlace, den: poleList.labelPlace, deadTime: delay?.labelPlace };
+  return ok({ ...plant.value, places });
 }

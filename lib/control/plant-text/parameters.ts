@@ -1,44 +1,48 @@
 import { ok, refuse } from '../../result';
 import { multiply } from '../polynomial';
 import { placeOf, type PlainText } from './characters';
-import { readSingle } from './numbers';
+import { readSingle, readTimeS } from './numbers';
+import { sectionsOf } from './sections';
 import type { RawPlant, TextResult } from './types';
 
-type Name = 'k' | 'kv' | 'tau1' | 'tau2' | 'tau3' | 'theta' | 'wn' | 'zeta' | 'tz';
+export type ParameterName = 'k' | 'kv' | 'tau1' | 'tau2' | 'tau3' | 'theta' | 'wn' | 'zeta' | 'tz';
+export type ParameterValues = Partial<Record<ParameterName, number>>;
 
-const NAMES: readonly (readonly [Name, RegExp])[] = [
-  ['k', /^(k|gain|ks|kp)$/i],
-  ['kv', /^(kv|ki|k')$/i],
+/** Kp, Ti, Td and the like are left out: they name settings of a controller. */
+const NAMES: readonly (readonly [ParameterName, RegExp])[] = [
+  ['k', /^(k|ks|gain)$/i],
+  ['kv', /^(kv|k')$/i],
   ['tau1', /^(tau_?1?|τ_?1?|t_?1?|lag_?1?)$/i],
   ['tau2', /^(tau_?2|τ_?2|t_?2|lag_?2)$/i],
   ['tau3', /^(tau_?3|τ_?3|t_?3|lag_?3)$/i],
-  ['theta', /^(theta|θ|ϑ|l|delay|dead_?time|td)$/i],
+  ['theta', /^(theta|θ|ϑ|l|delay|dead_?time(_?s)?)$/i],
   ['wn', /^(wn|w_n|ωn|ω_n|omega_?n|w0|ω0|omega_?0)$/i],
   ['zeta', /^(zeta|ζ|ξ|xi)$/i],
-  ['tz', /^(tz|t_z|tauz|tau_z|τz)$/i],
+  ['tz', /^(tz|t_z|tauz|tau_z|τz|τ_z)$/i],
 ];
 
-const PAIR =
-  /([\p{L}_][\p{L}\d_']*)\s*[=:]\s*([+-]?(?:\d+(?:[.,]\d+)?|[.,]\d+)(?:e[+-]?\d+)?)\s*(?:(?:rad\/s|s|sec)(?![\p{L}\d_]))?/giu;
+export const KNOWN_NAMES = 'K or Kv, tau, tau1, tau2, tau3, wn and zeta, tz, theta';
+const LABEL = /(?<![\p{L}\d_])([\p{L}][\p{L}\d_']*|dead[ -]time)\s*[=:]/giu;
+const IS_TIME: ReadonlySet<ParameterName> = new Set(['tau1', 'tau2', 'tau3', 'theta', 'tz']);
 
-export function nameOf(word: string): Name | null {
-  return NAMES.find(([, pattern]) => pattern.test(word))?.[0] ?? null;
+export function parameterName(word: string): ParameterName | undefined {
+  return NAMES.find(([, pattern]) => pattern.test(word.replace(/[ -]/, '')))?.[0];
 }
 
-/** Whether a text is a run of `name = number` and nothing else. */
+/** Whether a text is a run of `name = number`; `K = 2/(s+1)` and `G = …` are expressions. */
 export function looksLikeParameters(text: string): boolean {
-  const rest = text.replace(PAIR, '');
-  return rest.length < text.length && /^[\s,;]*$/.test(rest);
+  const labels = [...text.matchAll(LABEL)];
+  if (labels.length === 0 || text.slice(0, labels[0].index).trim() !== '') return false;
+  if (labels.length > 1) return true;
+  const name = parameterName(labels[0][1]);
+  return name === 'k' || name === 'kv' ? !/[(^*/]|\d\s*s\b/.test(text) : name !== undefined;
 }
 
-type Values = Partial<Record<Name, number>>;
-
-/** Builds the plant that the named values stand for. */
-export function plantOfParameters(values: Values): TextResult<RawPlant> {
-  const { k, kv, tau1, tau2, tau3, theta = 0, wn, zeta, tz } = values;
+function contradiction({ k, kv, tau1, tau2, tau3, wn, zeta }: ParameterValues): TextResult<null> {
   if (k === undefined && kv === undefined)
     return refuse('SYNTAX', 'The gain is missing: state K, or Kv for an integrating plant.');
-  if (k !== undefined && kv !== undefined) return refuse('AMBIGUOUS', 'State K or Kv, not both.');
+  if (k !== undefined && kv !== undefined)
+    return refuse('AMBIGUOUS', 'K and Kv are both stated. State K, or Kv for an integrating plant.');
   if ((wn === undefined) !== (zeta === undefined))
     return refuse(
       'SYNTAX',
@@ -47,14 +51,27 @@ export function plantOfParameters(values: Values): TextResult<RawPlant> {
   const lags = [tau1, tau2, tau3].filter((tau) => tau !== undefined);
   if (wn !== undefined && lags.length > 0)
     return refuse('AMBIGUOUS', 'State time constants, or natural frequency and damping, not both.');
-  const named: [string, number | undefined][] = [
-    ['A time constant', Math.min(...lags, Infinity)],
-    ['The natural frequency', wn],
-  ];
-  for (const [words, value] of named)
-    if (value !== undefined && value <= 0) return refuse('SYNTAX', `${words} must be above 0, not ${value}.`);
+  const lag = lags.find((tau) => tau <= 0);
+  if (lag !== undefined)
+    return refuse(
+      'SYNTAX',
+      `A time constant must be above 0, not ${lag}. Write an unstable plant as an expression: 2/(10s-1).`,
+    );
+  if (wn !== undefined && wn <= 0)
+    return refuse('SYNTAX', `The natural frequency must be above 0, not ${wn}.`);
+  return ok(null);
+}
+
+/**
+ * The plant that named values stand for: K·(tz s + 1)/((tau1 s + 1)…)·e^(-theta s), K·wn²/(s² + 2 zeta wn s + wn²),
+ * and with Kv in place of K the same with a pole at the origin.
+ */
+export function plantOfParameters(values: ParameterValues): TextResult<RawPlant> {
+  const possible = contradiction(values);
+  if (!possible.ok) return possible;
+  const { k, kv, tau1, tau2, tau3, theta = 0, wn, zeta, tz } = values;
   let den = kv === undefined ? [1] : [1, 0];
-  for (const tau of lags) den = multiply(den, [tau, 1]);
+  for (const tau of [tau1, tau2, tau3]) if (tau !== undefined) den = multiply(den, [tau, 1]);
   let num = [k ?? kv ?? 0];
   if (wn !== undefined && zeta !== undefined) {
     den = multiply(den, [1, 2 * zeta * wn, wn * wn]);
@@ -66,21 +83,18 @@ export function plantOfParameters(values: Values): TextResult<RawPlant> {
 
 /** Named parameters: `K=2 tau=10 theta=3`, `K=1.25 wn=44 zeta=1.35`, `Kv=0.2 theta=1`. */
 export function readParameters(source: PlainText): TextResult<RawPlant> {
-  const values: Values = {};
-  for (const match of source.text.matchAll(PAIR)) {
-    const [, word, number] = match;
-    const name = nameOf(word);
-    const at = placeOf(source, match.index);
-    if (!name)
-      return refuse(
-        'UNKNOWN_SYMBOL',
-        `“${word.slice(0, 30)}” is not known here. Use K or Kv, tau, tau1, tau2, wn, zeta, tz, theta.`,
-        at,
-      );
-    if (values[name] !== undefined) return refuse('AMBIGUOUS', `“${word}” is stated twice.`, at);
-    const read = readSingle(number, at);
+  const cut = sectionsOf(source, LABEL, parameterName, KNOWN_NAMES);
+  if (!cut.ok) return cut;
+  const values: ParameterValues = {};
+  let deadTime: number | undefined;
+  for (const { kind, label, labelPlace, part } of cut.value) {
+    if (part.text.trim() === '') return refuse('SYNTAX', `The number of “${label}” is missing.`, labelPlace);
+    const number = kind === 'wn' ? { ...part, text: part.text.replace(/\s*rad\/s\s*$/i, '') } : part;
+    const read = IS_TIME.has(kind) ? readTimeS(number) : readSingle(number);
     if (!read.ok) return read;
-    values[name] = read.value;
+    values[kind] = read.value;
+    if (kind === 'theta') deadTime = labelPlace;
   }
-  return plantOfParameters(values);
+  const plant = plantOfParameters(values);
+  return plant.ok ? ok({ ...plant.value, places: { num: placeOf(source, 0), deadTime } }) : plant;
 }

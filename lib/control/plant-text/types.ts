@@ -27,12 +27,20 @@ export type PlantTextCode =
 
 export type TextResult<T> = Result<T, PlantTextCode>;
 
+/** Where the parts of a plant begin in the text, as far as it can be told. */
+export interface PartPlaces {
+  readonly num?: number;
+  readonly den?: number;
+  readonly deadTime?: number;
+}
+
 /** Coefficients as read, before they are judged as a plant. */
 export interface RawPlant {
   readonly num: readonly number[];
   readonly den: readonly number[];
   readonly deadTimeS: number;
   readonly warnings?: readonly string[];
+  readonly places?: PartPlaces;
 }
 
 export const HIGHEST_ORDER = 20;

@@ -1,6 +1,5 @@
-import { roots } from '../control/roots';
+import { openLoop } from '../control/loop';
 import type { IdealController, Margins, Plant } from '../control/types';
-import { characteristic } from './exact/loop-scales';
 import { responsesOf, type ResponseSource } from './exact/responses';
 import { finalValues, type FinalValues } from './final-values';
 import { settledAfter } from './metrics';
@@ -16,10 +15,11 @@ const REST = 0.005;
 /** The last fifth of the horizon must be at rest. */
 const SHOWN = 0.8;
 const MOST_TIME_CONSTANTS = 200;
-/** With dead time the slowest mode is not known beforehand: the search may go on longer than its crossover suggests. */
-const SEARCH = 100;
+/** In time constants: long enough for most loops. */
+const FIRST = 6.5;
+/** A loop rings for about this times (Ms − 1) radians of its crossover, in time constants of their own. */
+const RINGING = 1.3;
 const LEAST_DEAD_TIMES = 4;
-const DOUBLINGS = 11;
 const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
 
 /** The next round length: with it the scales of a plot stand still while the gains move a little. */
@@ -29,24 +29,20 @@ function roundUp(value: number): number {
   return Number((nice * decade).toPrecision(3));
 }
 
-/** A first guess, and what is too long in any case. */
-function bounds(
-  plant: Plant,
-  controller: IdealController,
-  margins: Margins,
-): { first: number; most: number } {
-  if (plant.deadTimeS === 0) {
-    const slowest = Math.min(...roots(characteristic(plant, controller)).map(({ re }) => -re));
-    const timeConstant = Number.isFinite(slowest) && slowest > 0 ? 1 / slowest : 1;
-    return { first: 8 * timeConstant, most: MOST_TIME_CONSTANTS * timeConstant };
-  }
-  const crossover = margins.gainCrossover ?? margins.phaseCrossover;
-  const timeConstant = crossover && Number.isFinite(crossover) ? 1 / crossover : plant.deadTimeS;
-  const slow = Number.isFinite(controller.ti) ? Math.max(timeConstant, controller.ti / 4) : timeConstant;
-  return {
-    first: Math.max(10 * plant.deadTimeS, 12 * slow),
-    most: SEARCH * MOST_TIME_CONSTANTS * Math.max(slow, plant.deadTimeS),
-  };
+/**
+ * About the sum of the closed loop's time constants: −d/ds ln of Q(s) + P(s)e^(−θs) at 0, L = P/Q·e^(−θs). What rings
+ * longer than that shows in the peak of the sensitivity.
+ */
+function timeConstantOf(plant: Plant, controller: IdealController, margins: Margins): number {
+  const { num, den, deadTimeS } = openLoop(plant, controller);
+  const at = (p: readonly number[], power: number) => p[p.length - 1 - power] ?? 0;
+  const slope = at(den, 1) + at(num, 1) - deadTimeS * at(num, 0);
+  const sum = Math.abs(slope / (at(den, 0) + at(num, 0)));
+  const { ms, msFrequency, gainCrossover } = margins;
+  const frequency = gainCrossover ?? msFrequency ?? 0;
+  const ringing = frequency > 0 && frequency < Infinity ? ((ms ?? 1) - 1) / frequency : 0;
+  const timeConstant = Math.max(sum, RINGING * ringing, deadTimeS);
+  return timeConstant > 0 && timeConstant < Infinity ? timeConstant : 1;
 }
 
 /**
@@ -64,15 +60,15 @@ export function automaticHorizon(
   source: ResponseSource = responsesOf(plant, controller),
   final: FinalValues = finalValues(plant, controller),
 ): Horizon {
-  const { first, most } = bounds(plant, controller, margins);
+  const timeConstantS = timeConstantOf(plant, controller, margins);
   const least = LEAST_DEAD_TIMES * plant.deadTimeS;
-  let horizonS = Math.max(first, least);
-  for (let i = 0; i < DOUBLINGS; i += 1) {
+  let horizonS = Math.max(FIRST * timeConstantS, least);
+  for (;;) {
     const needed = timeToRest(source, final, horizonS);
     if (needed === 'never') break;
     if (needed !== null && needed <= SHOWN * horizonS)
       return { horizonS: roundUp(Math.max(needed / SHOWN, least, horizonS / 50)), settled: true };
-    if (2 * horizonS > most) break;
+    if (2 * horizonS > MOST_TIME_CONSTANTS * timeConstantS) break;
     horizonS *= 2;
   }
   return { horizonS: roundUp(horizonS), settled: false };

@@ -28,11 +28,11 @@ export class DelayedOutput {
     this.read(piece, timeS);
   }
 
-  /** Just before a time later than that of the last `after`; returns its piece. */
-  before(timeS: number, margin: number): number {
+  /** Just before a time later than that of the last `after`; returns whether both lie in one piece. */
+  before(timeS: number, margin: number): boolean {
     const piece = this.at(timeS - margin);
     this.read(piece, timeS);
-    return piece;
+    return piece === this.piece;
   }
 
   /** Anywhere in between. */

@@ -1,6 +1,5 @@
 import { openLoop } from '../../control/loop';
 import { add, trimmed } from '../../control/polynomial';
-import { roots } from '../../control/roots';
 import type { Actuator, IdealController, Plant } from '../../control/types';
 import type { StepKind } from './spaces';
 
@@ -31,10 +30,14 @@ export function levelsFor(rate: number, gridS: number): Levels {
   };
 }
 
-/** Size of the fastest root, 1/s; 0 for a constant. */
+/** Size that no root exceeds, 1/s (Fujiwara 1916): within twice the degree of the fastest one. 0 for a constant. */
 export function fastestRate(polynomial: readonly number[]): number {
   const p = trimmed(polynomial);
-  return p.length > 1 ? Math.max(...roots(p).map(({ re, im }) => Math.hypot(re, im))) : 0;
+  const degree = p.length - 1;
+  let largest = 0;
+  for (let k = 1; k <= degree; k += 1)
+    largest = Math.max(largest, Math.abs(p[k] / p[0] / (k === degree ? 2 : 1)) ** (1 / k));
+  return 2 * largest;
 }
 
 /** Characteristic polynomial of the loop, its dead time left out. */

@@ -39,7 +39,7 @@ export class Regime {
   step(level: number): StepOperator {
     let operator = this.operators.get(level);
     if (!operator) {
-      operator = stepOperator(this.space, this.levels.at(level), this.deadTimeS);
+      operator = stepOperator(this.space, this.levels.at(level), this.deadTimeS, 2 ** level);
       this.operators.set(level, operator);
     }
     return operator;
@@ -50,7 +50,7 @@ export class Regime {
     const { odd } = this;
     const found = odd.find(({ stepS }) => Math.abs(stepS - lengthS) <= SAME * lengthS);
     if (found) return found;
-    const operator = stepOperator(this.space, this.levels.over(lengthS), this.deadTimeS);
+    const operator = stepOperator(this.space, this.levels.over(lengthS), this.deadTimeS, 0);
     odd.unshift(operator);
     if (odd.length > KEPT) odd.pop();
     return operator;

@@ -3,6 +3,8 @@ import { dot, POWERS, slopeReading, type Propagator, type Reading, type StateSpa
 /** One step of fixed length: z₁ = Φ z₀ + Γ·(w₀, h·ẇ₀, w₁, h·ẇ₁) + one, where w is a cubic over the step. */
 export interface StepOperator {
   readonly stepS: number;
+  /** Length in units of the base, a power of two; 0 for a step of odd length. */
+  readonly units: number;
   readonly phi: Float64Array;
   /** n rows of 4 columns; null where w plays no part. */
   readonly gamma: Float64Array | null;
@@ -25,9 +27,14 @@ export interface EchoWithinStep {
 }
 
 /** Takes a step from a propagator: from the derivatives of w at the start to values and slopes at both ends. */
-export function stepOperator(space: StateSpace, propagator: Propagator, deadTimeS: number): StepOperator {
+export function stepOperator(
+  space: StateSpace,
+  propagator: Propagator,
+  deadTimeS: number,
+  units: number,
+): StepOperator {
   const { lengthS: stepS, phi, byInput, byConstant: ones } = propagator;
-  if (!byInput) return { stepS, phi, gamma: null, ones, echo: null };
+  if (!byInput) return { stepS, units, phi, gamma: null, ones, echo: null };
   const gamma = new Float64Array(space.n * POWERS);
   const perStep = space.timeUnitS / stepS;
   for (let g = 0; g < gamma.length; g += POWERS) {
@@ -40,7 +47,7 @@ export function stepOperator(space: StateSpace, propagator: Propagator, deadTime
     gamma[g + 3] = third - second;
   }
   const inside = deadTimeS > 0 && stepS > deadTimeS * (1 + 1e-9);
-  return { stepS, phi, gamma, ones, echo: inside ? echoWithin(space, gamma, stepS, deadTimeS) : null };
+  return { stepS, units, phi, gamma, ones, echo: inside ? echoWithin(space, gamma, stepS, deadTimeS) : null };
 }
 
 function echoWithin(

@@ -36,9 +36,10 @@ const DIVERGED = 1e12;
 const MOST_PIECES = 1_000_000;
 /** Error of the cubic of y, as a share of the largest so far. */
 const Y_ERROR = 1e-6;
-/** The same of v; where v comes back after a dead time its errors add up over the response. */
+/** The same of v. Where v comes back after a dead time its errors add up: the longer, the less is allowed. */
 const V_ERROR = 2e-6;
-const ECHOED_ERROR = 2e-7;
+const ECHOED_ERROR = 1e-6;
+const LONG = 500;
 
 /**
  * Steps through the spans of a response, exactly but for the cubic that stands for the delayed output over a step.
@@ -64,7 +65,6 @@ export class Stepper {
   private readonly order: number;
   private readonly deadTimeS: number;
   private readonly load: number;
-  private readonly vError: number;
   /** Pieces before the last pair. */
   private countBefore = 0;
 
@@ -75,7 +75,6 @@ export class Stepper {
     this.order = order;
     this.deadTimeS = deadTimeS;
     this.load = load;
-    this.vError = deadTimeS > 0 ? ECHOED_ERROR : V_ERROR;
     this.peakY = 0;
     this.peakV = 0;
     this.history = new DelayedOutput(this.trajectory);
@@ -85,53 +84,54 @@ export class Stepper {
   }
 
   /**
-   * Goes on through a span, to its end or until `enough`; stops earlier at an event. Returns whether it did.
+   * Goes on through a span, to its end or until `enoughS`; stops earlier at an event. Returns whether it did.
    * Steps within a span stand on multiples of their length from its start.
    */
-  run(span: Span, enoughS = Infinity): boolean {
-    const { settings } = this;
-    this.readStates(span.regime);
+  run(span: Span, enoughS: number): boolean {
+    const { baseS } = this.settings;
+    const { regime, event } = span;
     const startS = this.timeS;
+    let operator = regime.step(this.level);
+    // In units of baseS, a sum of powers of two: exact.
     let position = 0;
-    for (;;) {
-      const leftS = span.endS - this.timeS;
-      if (leftS <= 0 || this.timeS >= enoughS || this.refusal) return false;
-      let length = 2 ** this.level;
-      let stepS = settings.baseS * length;
-      const last = leftS <= 2 * stepS * (1 + 1e-9);
-      const fitted = last && leftS < 2 * stepS * (1 - 1e-9);
-      if (fitted) stepS = leftS / 2;
-      const operator = fitted ? span.regime.stepOver(stepS) : span.regime.step(this.level);
-      const endS = last ? span.endS : startS + (position + 2 * length) * settings.baseS;
+    this.readStates(regime);
+    while (this.timeS < span.endS && this.timeS < enoughS && !this.refusal) {
       const from = this.timeS;
-      const good = this.takePair(
-        span,
-        operator,
-        fitted ? from + stepS : startS + (position + length) * settings.baseS,
-        endS,
-      );
-      if (!good && this.level > this.leastLevel) {
-        this.goBack(span.regime, from);
-        this.level -= 1;
-        while (fitted && settings.baseS * 2 ** this.level > 0.6 * stepS && this.level > this.leastLevel)
-          this.level -= 1;
-        continue;
-      }
-      const at = span.event ? span.event(this) : null;
-      if (at !== null) {
-        this.goBack(span.regime, from);
-        if (at > from) {
-          const half = (at - from) / 2;
-          this.takePair(span, span.regime.stepOver(half), from + half, at);
+      const leftS = span.endS - from;
+      if (leftS < 2 * operator.stepS * (1 - 1e-9)) {
+        if (this.takePair(span, regime.stepOver(leftS / 2), from + leftS / 2, span.endS)) {
+          if (this.stoppedBy(event, span, from)) return true;
+          continue;
         }
-        this.keepPair();
-        return true;
+      } else {
+        const { units } = operator;
+        const whole = leftS <= 2 * operator.stepS * (1 + 1e-9);
+        const endS = whole ? span.endS : startS + (position + 2 * units) * baseS;
+        if (this.takePair(span, operator, startS + (position + units) * baseS, endS)) {
+          if (this.stoppedBy(event, span, from)) return true;
+          position += 2 * units;
+          if (this.mayDouble() && position % (4 * units) === 0) operator = regime.step((this.level += 1));
+          continue;
+        }
       }
-      this.keepPair();
-      position += 2 * length;
-      length *= 4;
-      if (!fitted && good && this.mayDouble() && position % length === 0) this.level += 1;
+      this.goBack(regime, from);
+      // A pair that was cut short is not shortened by one halving alone.
+      do operator = regime.step((this.level -= 1));
+      while (operator.stepS > 0.3 * leftS);
     }
+    return false;
+  }
+
+  /** Keeps the last pair, up to the event where there is one in it. */
+  private stoppedBy(event: Span['event'], span: Span, from: number): boolean {
+    const at = event ? event(this) : null;
+    if (at !== null) {
+      this.goBack(span.regime, from);
+      const half = (at - from) / 2;
+      if (half > 0) this.takePair(span, span.regime.stepOver(half), from + half, at);
+    }
+    this.keepPair();
+    return at !== null;
   }
 
   /** Why the response is not followed any further. */
@@ -151,7 +151,9 @@ export class Stepper {
   }
 
   private vAllowed(): number {
-    return this.vError * Math.max(this.peakV, this.settings.vFloor);
+    const share =
+      this.deadTimeS > 0 ? ECHOED_ERROR / (1 + Math.min(4, this.trajectory.count / LONG)) : V_ERROR;
+    return share * Math.max(this.peakV, this.settings.vFloor);
   }
 
   private goBack(regime: Regime, timeS: number): void {
@@ -171,12 +173,14 @@ export class Stepper {
   }
 
   private takePair(span: Span, operator: StepOperator, middleS: number, endS: number): boolean {
-    this.saved.set(this.z);
+    const { saved, z } = this;
+    for (let i = 0; i < saved.length; i += 1) saved[i] = z[i];
     this.history.mark();
     const first = this.take(span, operator, middleS, 0);
     const even = this.take(span, operator, endS, 4) && first;
     pairError(this.trajectory, this.pairV, this.error);
-    return even && this.error.y <= this.yAllowed() && this.error.v <= this.vAllowed();
+    const good = even && this.error.y <= this.yAllowed() && this.error.v <= this.vAllowed();
+    return good || this.level <= this.leastLevel;
   }
 
   /** One step to a time; false when what comes back after the dead time is too uneven for one cubic. */
@@ -201,10 +205,10 @@ export class Stepper {
       w0 = history.value + load;
       s0 = stepS * history.slope;
       if (toS - deadTimeS <= timeS + margin) {
-        const piece = history.before(toS - deadTimeS, margin);
+        const within = history.before(toS - deadTimeS, margin);
         w1 = history.value + load;
         s1 = stepS * history.slope;
-        if (piece !== history.piece) {
+        if (!within) {
           history.between(0.5 * (timeS + toS) - deadTimeS);
           even = Math.abs(history.value + load - 0.5 * (w0 + w1) - 0.125 * (s0 - s1)) <= this.vAllowed();
         }

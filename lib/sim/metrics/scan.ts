@@ -166,18 +166,25 @@ export function errorIntegrals(trajectory: Trajectory, reference: number): Error
 /** y and u on the uniform grid t = i·horizonS/(n − 1); where a signal jumps, the value after the jump. */
 export function resample(trajectory: Trajectory, horizonS: number, n: number) {
   const t = new Float64Array(n);
-  const y = new Float64Array(n);
-  const u = new Float64Array(n);
-  let piece = 0;
-  for (let i = 0; i < n; i += 1) {
-    const time = i === n - 1 ? horizonS : (i * horizonS) / (n - 1);
-    while (piece < trajectory.count - 1 && time >= trajectory.t[piece + 1]) piece += 1;
-    const h = load(trajectory, 'y', piece);
-    const x = Math.min(1, Math.max(0, (time - trajectory.t[piece]) / h));
-    t[i] = time;
-    y[i] = cubic.at(x);
-    load(trajectory, 'u', piece);
-    u[i] = cubic.at(x);
+  for (let i = 0; i < n - 1; i += 1) t[i] = (i * horizonS) / (n - 1);
+  t[n - 1] = horizonS;
+  return { t, y: sampled(trajectory, 'y', t), u: sampled(trajectory, 'u', t) };
+}
+
+function sampled(trajectory: Trajectory, signal: Signal, times: Float64Array): Float64Array {
+  const { t, count } = trajectory;
+  const values = new Float64Array(times.length);
+  let i = 0;
+  for (let piece = 0; piece < count && i < times.length; piece += 1) {
+    const end = piece === count - 1 ? Infinity : t[piece + 1];
+    if (times[i] >= end) continue;
+    const perPiece = 1 / load(trajectory, signal, piece);
+    const { a, b, c, d } = cubic;
+    const from = t[piece];
+    for (; i < times.length && times[i] < end; i += 1) {
+      const x = Math.min(1, Math.max(0, (times[i] - from) * perPiece));
+      values[i] = a + x * (b + x * (c + x * d));
+    }
   }
-  return { t, y, u };
+  return values;
 }

@@ -13,6 +13,7 @@ const quietChromium = [
 export default defineConfig({
   testDir: 'tests/browser',
   workers: 1,
+  forbidOnly: true,
   timeout: 120_000,
   expect: { timeout: 10_000 },
   reporter: [['list'], ['json']],

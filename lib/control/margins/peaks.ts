@@ -15,6 +15,8 @@ export interface Peak {
 /** Stretches of the curve this short (rad, and as much in ln|L|) have at most one peak inside. */
 const SHORT = 0.25;
 const DEEPEST_SPLIT = 60;
+/** A dead time that turns the phase by millions of rounds must not keep the search going: then it gets coarser. */
+const MOST_SPLITS = 100_000;
 /** Below |L| = 1/50 the curve is next to the origin, and its size need not be resolved. */
 const LN_NEGLIGIBLE = -4;
 /** |L| or its distance from L(∞) is below 1e-6 of its last value there. */
@@ -35,6 +37,7 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
   const ends = endPeak(loop, sign);
   let best: Peak | null = null;
   let known = 0;
+  let splitsLeft = MOST_SPLITS;
   // Where ln|L| (or -ln|L| for T) is outside this band, |L| alone keeps the value below the best known.
   let bandLow = -Infinity;
   let bandHigh = Infinity;
@@ -57,7 +60,8 @@ export function sensitivityPeak({ loop, nodes }: LoopCurve, which: Sensitivity, 
     const phaseHigh = Math.max(a.phase, b.phase) + phaseReach;
     if (highestInBox(lnLow, lnHigh, phaseLow, phaseHigh) <= known) return;
     const short = phaseHigh - phaseLow < SHORT && (lnHigh - lnLow < SHORT || lnHigh < LN_NEGLIGIBLE);
-    if (!short && depth < DEEPEST_SPLIT) {
+    if (!short && depth < DEEPEST_SPLIT && splitsLeft > 0) {
+      splitsLeft -= 1;
       const between = middle(loop, a, b);
       search(a, between, depth + 1);
       search(between, b, depth + 1);

@@ -1,5 +1,5 @@
 import type { Levels } from './loop-scales';
-import { slopeReading, type StateSpace } from './state-space';
+import { columnsOf, slopeReading, type StateSpace } from './state-space';
 import { StepLevels } from './step-levels';
 import { stepOperator, type StepOperator } from './step-operator';
 
@@ -16,6 +16,12 @@ export class Regime {
   readonly direct: Float64Array;
   /** What each constant input adds to them. */
   readonly offsets: readonly Float64Array[];
+  /** Columns of an operator, and where those of the constants begin. */
+  readonly stride: number;
+  readonly constantsAt: number;
+  /** Does w play a part? */
+  readonly driven: boolean;
+  private readonly baseS: number;
   private readonly levels: StepLevels;
   private readonly operators = new Map<number, StepOperator>();
   private readonly odd: StepOperator[] = [];
@@ -26,13 +32,22 @@ export class Regime {
     { baseS, leastLevel }: Levels,
     private readonly deadTimeS: number,
   ) {
+    this.baseS = baseS;
     this.levels = new StepLevels(space, baseS, leastLevel);
     const { y, v, n } = space;
+    const { stride, powers } = columnsOf(space);
+    this.stride = stride;
+    this.constantsAt = n + powers;
+    this.driven = powers > 0;
     const readings = [y, slopeReading(space, y), v, slopeReading(space, v)];
     this.rows = new Float64Array(4 * n);
     readings.forEach(({ z }, k) => this.rows.set(z, k * n));
     this.direct = Float64Array.from(readings, ({ w }) => w);
     this.offsets = space.constants.map((_, c) => Float64Array.from(readings, ({ ones }) => ones[c]));
+  }
+
+  lengthOf(level: number): number {
+    return this.baseS * 2 ** level;
   }
 
   /** A step of length base·2^level. */

@@ -24,14 +24,19 @@ export interface StateSpace {
 /** Derivatives of w in a propagator: w, ẇ, ẅ and the third. */
 export const POWERS = 4;
 
-/** A system over a fixed time: z₁ = Φ z₀ + byInput·(w, ẇ, ẅ, w⃛ at the start, per time unit) + byConstant. */
+/**
+ * A system over a fixed time, n rows of one matrix: z₁ = [Φ | byInput | byConstant]·[z₀; w, ẇ, ẅ, w⃛ at the start per
+ * time unit; one of the constants].
+ */
 export interface Propagator {
   readonly lengthS: number;
-  readonly phi: Float64Array;
-  /** n rows of POWERS columns. */
-  readonly byInput: Float64Array | null;
-  /** One column for each constant input. */
-  readonly byConstant: readonly Float64Array[];
+  readonly block: Float64Array;
+}
+
+/** Columns of a propagator: n for the states, then those of w (none where it plays no part), then the constants. */
+export function columnsOf({ n, bw, constants }: StateSpace): { powers: number; stride: number } {
+  const powers = bw ? POWERS : 0;
+  return { powers, stride: n + powers + constants.length };
 }
 
 export function dot(a: Float64Array, b: Float64Array): number {

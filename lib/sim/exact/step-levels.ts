@@ -1,5 +1,5 @@
-import { multiplySquare, norm, SMALL_NORM, smallExponential } from './matrix';
-import { POWERS, type Propagator, type StateSpace } from './state-space';
+import { norm, SMALL_NORM, smallExponential } from './matrix';
+import { columnsOf, POWERS, type Propagator, type StateSpace } from './state-space';
 
 /**
  * Propagators of one system over the lengths base·2^level: each is made of the one below, so that steps of many
@@ -22,11 +22,8 @@ export class StepLevels {
     const found = this.known.get(level);
     if (found) return found;
     const lengthS = this.baseS * 2 ** level;
-    const small = lengthS * this.rate <= SMALL_NORM;
-    const result =
-      small && level <= this.lowestLevel
-        ? series(this.space, lengthS)
-        : doubled(this.space, this.at(level - 1));
+    const fromSeries = level <= this.lowestLevel && lengthS * this.rate <= SMALL_NORM;
+    const result = fromSeries ? series(this.space, lengthS) : doubled(this.space, this.at(level - 1));
     this.known.set(level, result);
     return result;
   }
@@ -40,97 +37,77 @@ export class StepLevels {
   }
 }
 
+/** Terms that a Taylor series needs for a length over which the system moves little. */
 const TERMS = 12;
 
-/** For lengths over which the system moves little: Taylor series. */
 function series(space: StateSpace, lengthS: number): Propagator {
   const { n, a, bw, constants, timeUnitS } = space;
+  const { stride, powers } = columnsOf(space);
   const length = lengthS / timeUnitS;
-  const scaled = new Float64Array(a);
-  for (let i = 0; i < scaled.length; i += 1) scaled[i] *= length;
-  const byInput = bw ? new Float64Array(n * POWERS) : null;
-  // Over a step of this length the response to w^(k) is Σ A^i·bw·h^(i+k+1)/(i+k+1)!.
-  if (bw && byInput) {
-    eachPower(scaled, bw, n, (i, column) => {
-      let factor = 1;
-      for (let m = 1; m <= i; m += 1) factor /= m;
+  const scaled = a.map((value) => value * length);
+  const phi = smallExponential(scaled, n);
+  const block = new Float64Array(n * stride);
+  for (let i = 0; i < n; i += 1) for (let j = 0; j < n; j += 1) block[i * stride + j] = phi[i * n + j];
+  if (bw) {
+    // The response to w^(k) is Σ A^i·bw·h^(i+k+1)/(i+k+1)!.
+    let column = bw;
+    let factorial = 1;
+    for (let i = 0; i <= TERMS; i += 1) {
+      factorial *= i || 1;
+      let factor = 1 / factorial;
       for (let k = 0; k < POWERS; k += 1) {
-        factor /= i + k + 1;
-        const weight = factor * length ** (k + 1);
-        for (let row = 0; row < n; row += 1) byInput[row * POWERS + k] += weight * column[row];
+        factor *= length / (i + k + 1);
+        for (let row = 0; row < n; row += 1) block[row * stride + n + k] += factor * column[row];
       }
-    });
+      column = times(scaled, column, n);
+    }
   }
-  const byConstant = constants.map((e) => {
-    const sum = new Float64Array(n);
-    eachPower(scaled, e, n, (i, column) => {
-      let factor = length;
-      for (let m = 2; m <= i + 1; m += 1) factor /= m;
-      for (let row = 0; row < n; row += 1) sum[row] += factor * column[row];
-    });
-    return sum;
+  constants.forEach((e, c) => {
+    let column = e;
+    let factor = 1;
+    for (let i = 0; i <= TERMS; i += 1) {
+      factor *= i === 0 ? length : 1 / (i + 1);
+      for (let row = 0; row < n; row += 1) block[row * stride + n + powers + c] += factor * column[row];
+      column = times(scaled, column, n);
+    }
   });
-  return { lengthS, phi: smallExponential(scaled, n), byInput, byConstant };
+  return { lengthS, block };
 }
 
-/** The powers of a matrix times a vector. */
-function eachPower(
-  a: Float64Array,
-  vector: Float64Array,
-  n: number,
-  use: (power: number, column: Float64Array) => void,
-): void {
-  let column = new Float64Array(vector);
-  let next = new Float64Array(n);
-  for (let power = 0; power <= TERMS; power += 1) {
-    use(power, column);
-    times(a, column, next, n);
-    [column, next] = [next, column];
-  }
-}
-
-function times(a: Float64Array, vector: Float64Array, into: Float64Array, n: number): void {
+function times(a: Float64Array, vector: Float64Array, n: number): Float64Array {
+  const result = new Float64Array(n);
   for (let i = 0; i < n; i += 1) {
     let sum = 0;
     for (let j = 0; j < n; j += 1) sum += a[i * n + j] * vector[j];
-    into[i] = sum;
+    result[i] = sum;
   }
+  return result;
 }
 
-/** Two steps in one. */
-function doubled({ n, timeUnitS }: StateSpace, one: Propagator): Propagator {
-  const { phi, byInput } = one;
-  const length = one.lengthS / timeUnitS;
-  const byConstant = one.byConstant.map((column) => {
-    const sum = new Float64Array(n);
-    times(phi, column, sum, n);
-    for (let i = 0; i < n; i += 1) sum[i] += column[i];
-    return sum;
-  });
-  return {
-    lengthS: 2 * one.lengthS,
-    phi: multiplySquare(phi, phi, n),
-    byInput: byInput && doubledInput(phi, byInput, n, length),
-    byConstant,
-  };
-}
-
-/** The second half sees the derivatives of w as they have become: w^(j)(h) = Σ w^(k)·h^(k−j)/(k−j)!. */
-function doubledInput(phi: Float64Array, byInput: Float64Array, n: number, length: number): Float64Array {
-  const result = new Float64Array(n * POWERS);
+/**
+ * Two steps in one: the second half goes on from the end of the first, and sees the derivatives of w as they have
+ * become: w^(j)(h) = Σ w^(k)·h^(k−j)/(k−j)!.
+ */
+function doubled(space: StateSpace, { lengthS, block: one }: Propagator): Propagator {
+  const { n, timeUnitS } = space;
+  const { stride, powers } = columnsOf(space);
+  const length = lengthS / timeUnitS;
+  const block = new Float64Array(n * stride);
   for (let i = 0; i < n; i += 1) {
-    const at = i * POWERS;
+    const at = i * stride;
     for (let j = 0; j < n; j += 1) {
-      const factor = phi[i * n + j];
-      for (let k = 0; k < POWERS; k += 1) result[at + k] += factor * byInput[j * POWERS + k];
+      const factor = one[at + j];
+      if (factor === 0) continue;
+      for (let k = 0, from = j * stride; k < stride; k += 1) block[at + k] += factor * one[from + k];
     }
-    for (let k = 0; k < POWERS; k += 1) {
+    for (let k = 0; k < powers; k += 1) {
       let factor = 1;
       for (let j = k; j >= 0; j -= 1) {
-        result[at + k] += factor * byInput[at + j];
+        block[at + n + k] += factor * one[at + n + j];
         factor *= length / (k - j + 1);
       }
     }
+    for (let k = n + powers; k < stride; k += 1) block[at + k] += one[at + k];
   }
-  return result;
+  return { lengthS: 2 * lengthS, block };
 }

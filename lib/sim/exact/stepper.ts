@@ -3,7 +3,6 @@ import { DelayedOutput } from './delayed-output';
 import { pairError, type PairError } from './pair-error';
 import type { Floors, Levels } from './loop-scales';
 import type { Regime } from './regime';
-import { POWERS } from './state-space';
 import type { StepOperator } from './step-operator';
 
 /** A stretch of time over which one regime holds and nothing sharp reaches the plant. */
@@ -40,6 +39,7 @@ const Y_ERROR = 1e-6;
 const V_ERROR = 2e-6;
 const ECHOED_ERROR = 1e-6;
 const LONG = 500;
+const MOST_HALVINGS = 5;
 
 /**
  * Steps through the spans of a response, exactly but for the cubic that stands for the delayed output over a step.
@@ -115,9 +115,10 @@ export class Stepper {
         }
       }
       this.goBack(regime, from);
-      // A pair that was cut short is not shortened by one halving alone.
-      do operator = regime.step((this.level -= 1));
-      while (operator.stepS > 0.3 * leftS);
+      this.level = Math.max(this.level - this.halvings(), this.leastLevel);
+      // A pair that was cut short by the span's end is not shortened by that alone.
+      while (regime.lengthOf(this.level) > 0.3 * leftS) this.level -= 1;
+      operator = regime.step(this.level);
     }
     return false;
   }
@@ -140,6 +141,12 @@ export class Stepper {
     // Written so that a value that is not a number counts as too large.
     if (!(peakY <= DIVERGED * settings.yFloor && peakV <= DIVERGED * settings.vFloor)) return 'DIVERGED';
     return trajectory.count > MOST_PIECES ? 'TOO_LONG' : null;
+  }
+
+  /** How often the step has to be halved for an error that falls with its fourth power. */
+  private halvings(): number {
+    const excess = Math.max(this.error.y / this.yAllowed(), this.error.v / this.vAllowed());
+    return Math.min(MOST_HALVINGS, Math.max(1, Math.round(0.25 * Math.log2(excess))));
   }
 
   private mayDouble(): boolean {
@@ -188,7 +195,7 @@ export class Stepper {
     const { history, trajectory, timeS, order, deadTimeS, load } = this;
     const { held, input, constant, regime } = span;
     const isHeld = !Number.isNaN(held);
-    const { phi, gamma, stepS, echo } = operator;
+    const { block, stepS, echo } = operator;
     const index = trajectory.add(toS);
     let even = true;
     let w0 = 0;
@@ -217,29 +224,30 @@ export class Stepper {
     }
     this.write(span, index, into, w0, s0 / stepS);
     const { z, next } = this;
-    const one = operator.ones[constant];
-    for (let i = 0, row = 0; i < order; i += 1) {
-      let sum = one[i];
-      for (let j = 0; j < order; j += 1, row += 1) sum += phi[row] * z[j];
+    const { stride, constantsAt, driven } = regime;
+    for (let i = 0, row = 0; i < order; i += 1, row += stride) {
+      let sum = block[row + constantsAt + constant];
+      for (let j = 0; j < order; j += 1) sum += block[row + j] * z[j];
+      if (driven) sum += block[row + order] * w0 + block[row + order + 1] * s0;
       next[i] = sum;
     }
     this.z = next;
     this.next = z;
-    if (gamma) {
-      for (let i = 0, g = 0; i < order; i += 1, g += POWERS) next[i] += gamma[g] * w0 + gamma[g + 1] * s0;
-      if (echoed && echo) {
-        this.readStates(regime);
-        const [v0, d0] = [this.pairV[into], stepS * this.pairV[into + 1]];
-        const v1 = this.now[2] + regime.offsets[constant][2];
-        const d1 = stepS * (this.now[3] + regime.offsets[constant][3]);
-        const { start, end, solve } = echo;
-        const p = start[0] * v0 + start[1] * d0 + end[0] * v1 + end[1] * d1 + load;
-        const q = start[2] * v0 + start[3] * d0 + end[2] * v1 + end[3] * d1;
-        w1 = solve[0] * p + solve[1] * q;
-        s1 = solve[2] * p + solve[3] * q;
-      }
-      for (let i = 0, g = 2; i < order; i += 1, g += POWERS) next[i] += gamma[g] * w1 + gamma[g + 1] * s1;
+    if (echoed && echo) {
+      this.readStates(regime);
+      const v0 = this.pairV[into];
+      const d0 = stepS * this.pairV[into + 1];
+      const v1 = this.now[2] + regime.offsets[constant][2];
+      const d1 = stepS * (this.now[3] + regime.offsets[constant][3]);
+      const { start, end, solve } = echo;
+      const p = start[0] * v0 + start[1] * d0 + end[0] * v1 + end[1] * d1 + load;
+      const q = start[2] * v0 + start[3] * d0 + end[2] * v1 + end[3] * d1;
+      w1 = solve[0] * p + solve[1] * q;
+      s1 = solve[2] * p + solve[3] * q;
     }
+    if (driven)
+      for (let i = 0, g = order + 2; i < order; i += 1, g += stride)
+        next[i] += block[g] * w1 + block[g + 1] * s1;
     this.timeS = toS;
     this.readStates(regime);
     this.write(span, index, into + 2, w1, s1 / stepS);

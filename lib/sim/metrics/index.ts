@@ -38,7 +38,7 @@ export function setpointMetrics(trajectory: Trajectory, options: MetricOptions):
     overshootPct: overshoot,
     peakTimeS: overshoot < NO_OVERSHOOT_PCT ? null : top.time,
     riseTimeS: low === null || high === null ? null : high - low,
-    settlingTimeS: lastExit(trajectory, final, BAND * Math.abs(final)),
+    settlingTimeS: Number.isFinite(final) ? lastExit(trajectory, final, BAND * Math.abs(final)) : null,
     steadyError: 1 - final,
     iae: integrals.absolute,
     ise: integrals.squared,
@@ -62,7 +62,7 @@ export function loadMetrics(trajectory: Trajectory, options: MetricOptions): Loa
     peak: peak.value,
     peakTimeS: creeps ? null : peak.time,
     final,
-    recoveryTimeS: lastExit(trajectory, final, BAND * Math.abs(peak.value)),
+    recoveryTimeS: Number.isFinite(final) ? lastExit(trajectory, final, BAND * Math.abs(peak.value)) : null,
     iae: errorIntegrals(trajectory, 0).absolute,
     ...resample(trajectory, horizonS, points),
   };
@@ -78,6 +78,7 @@ export function settledAfter(
   share: number,
   of: 'final' | 'peak',
 ): number | null {
+  if (!Number.isFinite(final)) return null;
   const size = of === 'final' && final !== 0 ? Math.abs(final) : Math.abs(extreme(trajectory, 'y', 0).value);
   return lastExit(trajectory, final, share * size);
 }

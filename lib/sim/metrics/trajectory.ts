@@ -17,9 +17,7 @@ export class Trajectory {
 
   /** @param capacity pieces to make room for at first; it grows by itself */
   constructor(capacity = 1024) {
-    this.t = new Float64Array(capacity + 1);
-    [this.y0, this.dy0, this.y1, this.dy1] = arrays(capacity);
-    [this.u0, this.du0, this.u1, this.du1] = arrays(capacity);
+    [this.t, this.y0, this.dy0, this.y1, this.dy1, this.u0, this.du0, this.u1, this.du1] = columns(capacity);
   }
 
   /** Index of a new piece from the end of the last one to time `to`; the caller fills in the values at its ends. */
@@ -32,29 +30,19 @@ export class Trajectory {
   }
 
   private grow(): void {
-    const capacity = 2 * this.y0.length;
-    const larger = (values: Float64Array, length: number) => {
-      const copy = new Float64Array(length);
-      copy.set(values);
-      return copy;
-    };
-    this.t = larger(this.t, capacity + 1);
-    this.y0 = larger(this.y0, capacity);
-    this.dy0 = larger(this.dy0, capacity);
-    this.y1 = larger(this.y1, capacity);
-    this.dy1 = larger(this.dy1, capacity);
-    this.u0 = larger(this.u0, capacity);
-    this.du0 = larger(this.du0, capacity);
-    this.u1 = larger(this.u1, capacity);
-    this.du1 = larger(this.du1, capacity);
+    const { t, y0, dy0, y1, dy1, u0, du0, u1, du1 } = this;
+    const larger = columns(2 * y0.length);
+    [t, y0, dy0, y1, dy1, u0, du0, u1, du1].forEach((values, i) => larger[i].set(values));
+    [this.t, this.y0, this.dy0, this.y1, this.dy1, this.u0, this.du0, this.u1, this.du1] = larger;
   }
 }
 
-function arrays(length: number): [Float64Array, Float64Array, Float64Array, Float64Array] {
-  return [
-    new Float64Array(length),
-    new Float64Array(length),
-    new Float64Array(length),
-    new Float64Array(length),
-  ];
+/** Nine arrays in one piece of memory, the first longer by one. */
+function columns(capacity: number): Float64Array[] {
+  const memory = new ArrayBuffer(8 * (9 * capacity + 1));
+  const rest = Array.from(
+    { length: 8 },
+    (_, i) => new Float64Array(memory, 8 * ((i + 1) * capacity + 1), capacity),
+  );
+  return [new Float64Array(memory, 0, capacity + 1), ...rest];
 }

@@ -5,6 +5,8 @@ import type { ScaledLoop } from './scaled-loop';
 export type Quantity = 'ln' | 'phase';
 
 const DEEPEST_SPLIT = 40;
+/** Enough for any loop that means anything; beyond it a crossing is found more coarsely. */
+const MOST_SPLITS = 100_000;
 /** A stretch that cannot leave this band around the wanted value touches it rather than crosses it. */
 const TOUCHING = 1e-11;
 /** ln|L(0)| this small is 0 to rounding: the curve starts on |L| = 1 and does not cross it there. */
@@ -39,6 +41,7 @@ export function middle(loop: ScaledLoop, a: CurveNode, b: CurveNode): CurveNode 
 /** All frequencies at which |L| = 1, ascending, each with its phase. */
 export function unitGainCrossings({ loop, nodes }: LoopCurve): { w: number; phase: number }[] {
   const found: { w: number; phase: number }[] = [];
+  let splitsLeft = MOST_SPLITS;
   for (let i = 1; i < nodes.length; i += 1)
     if (!isSingular(nodes[i - 1], nodes[i])) search(nodes[i - 1], nodes[i], 0);
   return found;
@@ -47,11 +50,12 @@ export function unitGainCrossings({ loop, nodes }: LoopCurve): { w: number; phas
     const reach = slack(a, b, 'ln');
     if (Math.min(a.ln, b.ln) - reach > 0 || Math.max(a.ln, b.ln) + reach < 0) return;
     const touches = Math.abs(a.ln) + Math.abs(b.ln) + reach < TOUCHING;
-    if (isMonotone(a, b, 'ln') || touches || depth === DEEPEST_SPLIT) {
+    if (isMonotone(a, b, 'ln') || touches || depth === DEEPEST_SPLIT || splitsLeft === 0) {
       const startsThere = a.w === 0 && Math.abs(a.ln) <= STARTS_ON_ONE;
       if (a.ln > 0 !== b.ln > 0 && !startsThere) found.push(solve(loop, a, b, 'ln', 0));
       return;
     }
+    splitsLeft -= 1;
     const between = middle(loop, a, b);
     search(a, between, depth + 1);
     search(between, b, depth + 1);

@@ -2,6 +2,8 @@ import { lnMagnitudeAtInfinity, type CurveNode, type LoopCurve } from '../freque
 import { isMonotone, isSingular, middle, slack, solve } from '../frequency/crossings';
 
 const DEEPEST_SPLIT = 40;
+/** A dead time that turns the phase by millions of rounds must not keep the search going: then it gets coarser. */
+const MOST_SPLITS = 100_000;
 const TOUCHING = 1e-11;
 /** Gains that differ by less, relative, are the same limit reached at several frequencies. */
 const SAME = 1e-12;
@@ -29,6 +31,7 @@ export interface LimitGains {
 export function limitGains({ loop, nodes }: LoopCurve, lnLevel = 0): LimitGains {
   let above: LimitGain | null = null;
   let below: LimitGain | null = null;
+  let splitsLeft = MOST_SPLITS;
 
   function offer(lnFactor: number, w: number): void {
     if (lnFactor > lnLevel + SAME) {
@@ -55,7 +58,7 @@ export function limitGains({ loop, nodes }: LoopCurve, lnLevel = 0): LimitGains 
     const last = targetsUpTo(Math.max(a.phase, b.phase));
     const touches = highest - lowest < TOUCHING;
     const settled = isMonotone(a, b, 'phase') || touches || depth === DEEPEST_SPLIT;
-    if (settled && (last <= first || isOneSided(a, b, lnLevel))) {
+    if ((settled && (last <= first || isOneSided(a, b, lnLevel))) || splitsLeft === 0) {
       for (const target of last > first ? [first, last] : last === first ? [first] : []) {
         if (a.w === 0 && Math.abs(targetPhase(target) - a.phase) < TOUCHING / 1e3) continue;
         const crossing = solve(loop, a, b, 'phase', targetPhase(target));
@@ -64,6 +67,7 @@ export function limitGains({ loop, nodes }: LoopCurve, lnLevel = 0): LimitGains 
       return;
     }
     if (depth === DEEPEST_SPLIT) return;
+    splitsLeft -= 1;
     const between = middle(loop, a, b);
     search(a, between, depth + 1);
     search(between, b, depth + 1);

@@ -58,8 +58,16 @@ export class TextWriter {
 
   /** Writes characters that all stand for the one typed at `place`. */
   write(characters: string, place: number): void {
+    if (this.isRepeatedBlank(characters)) return;
     for (let i = 0; i < characters.length; i += 1) this.places.push(place);
     this.text += characters;
+  }
+
+  /** A blank behind another says nothing, and long runs of them would be searched over and over. */
+  private isRepeatedBlank(characters: string): boolean {
+    const last = this.text.at(-1) ?? '';
+    if (characters === ' ' || characters === '\t') return /^\s$/.test(last);
+    return characters === '\n' && (last === '\n' || (last === ' ' && this.text.at(-2) === '\n'));
   }
 
   finish(): PlainText {

@@ -1,13 +1,13 @@
 import { ok, refuse } from '../../result';
 import { placeOf, sliceOf, type PlainText } from './characters';
-import { commaMeaning, readList, readTimeS } from './numbers';
+import { commaMeaning, readList, readTimeS, type CommaMeaning } from './numbers';
 import { sectionFor, sectionsOf } from './sections';
 import type { RawPlant, TextResult } from './types';
 
 const LABEL =
   /(?<![\p{L}\d])((?:num|numerator|den|denominator|delay|dead[\s_-]?time|theta|θ)(?![\p{L}\d])|[bnad](?=\s*[:=]))\s*[:=]?/giu;
 const RATIO = /^\s*\[([^[\]]*)\]\s*[/,;]?\s*\[([^[\]]*)\]\s*$/;
-const NUMBERS_ONLY = /^[\s\d.,;eE+-]*\d[\s\d.,;eE+-]*$/;
+const NUMBERS_ONLY = /^[\s.,;eE+-]*\d[\s\d.,;eE+-]*$/;
 const ONE_LIST = /^\s*\[[^[\]]*\]\s*$/;
 const SEVERAL_NUMBERS = /[\d.]\s*[,;\s]\s*[+-]?[\d.]/;
 
@@ -54,8 +54,30 @@ function lineBreak(text: string): number {
   return /^\s*\S[^\n]*\n\s*\S[^\n]*\s*$/.test(text) ? text.indexOf('\n', text.search(/\S/)) : -1;
 }
 
-function readLists(num: PlainText, den: PlainText): TextResult<RawPlant> {
-  const commas = commaMeaning([num.text, den.text]);
+/**
+ * [2]/[10,1] could be 2/10.1, but that would be no plant with a motion of its own: brackets around single words with
+ * commas are lists of numbers parted by commas.
+ */
+function inBrackets(num: PlainText, den: PlainText): boolean {
+  return [num, den].every(({ text }) => !/[;\s]/.test(text.trim()));
+}
+
+/** How the commas were taken, where only the look of the lists tells. */
+function commaNote(lists: readonly PlainText[], commas: CommaMeaning): string[] {
+  const [word] = lists.map(({ text }) => /[^;\s]*\d,\d[^;\s]*/.exec(text)?.[0]).filter(Boolean);
+  if (word === undefined) return [];
+  if (commas === 'either')
+    return [`“${word}” is read as two numbers. Write ${word.replace(',', '.')} for one.`];
+  if (commas !== 'decimal' || lists.some(({ text }) => /[;\t\n]/.test(text))) return [];
+  return [
+    `“${word}” is read as ${word.replace(',', '.')}, with a decimal comma. Write blanks for two numbers.`,
+  ];
+}
+
+function readLists(num: PlainText, den: PlainText, bracketed = false): TextResult<RawPlant> {
+  const meaning = commaMeaning([num.text, den.text]);
+  const commas = meaning === 'either' && bracketed && inBrackets(num, den) ? 'separator' : meaning;
+  const warnings = commaNote([num, den], commas === meaning ? commas : 'either');
   const top = readList(num, commas);
   if (!top.ok) return top;
   const bottom = readList(den, commas);
@@ -64,7 +86,7 @@ function readLists(num: PlainText, den: PlainText): TextResult<RawPlant> {
     num: placeOf(num, num.text.search(/\S/)),
     den: placeOf(den, den.text.search(/\S/)),
   };
-  return ok({ num: top.value, den: bottom.value, deadTimeS: 0, places });
+  return ok({ num: top.value, den: bottom.value, deadTimeS: 0, places, warnings });
 }
 
 /** One list is no plant; the more so when it can't be told what it holds. */
@@ -114,6 +136,6 @@ export function readLabelled(source: PlainText): TextResult<RawPlant> {
 /** `[2420] / [1 118.8 1936]` or two lines, in descending powers of s; null when the text is no such thing. */
 export function readCoefficients(source: PlainText): TextResult<RawPlant> | null {
   const lists = twoLists(source);
-  if (lists) return readLists(...lists);
+  if (lists) return readLists(...lists, RATIO.test(source.text));
   return ONE_LIST.test(source.text) ? oneList(source) : null;
 }

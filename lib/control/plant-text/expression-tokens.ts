@@ -22,6 +22,14 @@ function unknownWord(word: string, at: number): TextResult<never> {
 /** An expression ready for the parser, with the places of its numbers and symbols in their order. */
 export interface Tokens extends PlainText {
   readonly leaves: readonly number[];
+  readonly warnings: readonly string[];
+}
+
+/** 2e-3s may be meant for 2 e^(-3s): the number touches s. */
+function likeDeadTime(number: string, next: string | undefined): string[] {
+  const [factor, exponent] = number.split(/e(?=-)/i);
+  if (exponent === undefined || next !== 's') return [];
+  return [`“${number}” is read as a number. Write ${factor} e^(${exponent} s) for a dead time.`];
 }
 
 type Kind = 'number' | 'operand' | 'open' | 'close' | 'operator' | 'function' | 'start';
@@ -56,6 +64,7 @@ export function tokenised(source: PlainText): TextResult<Tokens> {
   const { text } = source;
   const writer = new TextWriter();
   const leaves: number[] = [];
+  const warnings: string[] = [];
   let before: Kind = 'start';
   let newLine = false;
   for (let from = 0; from < text.length;) {
@@ -83,6 +92,7 @@ export function tokenised(source: PlainText): TextResult<Tokens> {
       const touching = touchingNumber(before, number, at);
       if (!touching.ok) return touching;
       leaves.push(at);
+      warnings.push(...likeDeadTime(number, text[from + number.length]));
       // Without its bare point, which the parser would take for the beginning of another operator: 10.*s.
       const digits = number.replace(/\.$/, '');
       for (let i = 0; i < digits.length; i += 1) writer.write(digits[i], placeOf(source, from + i));
@@ -111,5 +121,5 @@ export function tokenised(source: PlainText): TextResult<Tokens> {
       return refuse('SYNTAX', `“${strange}” can’t stand in an expression in s. ${hint}`, at);
     }
   }
-  return ok({ ...writer.finish(), leaves });
+  return ok({ ...writer.finish(), leaves, warnings });
 }

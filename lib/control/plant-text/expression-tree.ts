@@ -42,6 +42,12 @@ function isExponential(node: Node): boolean {
   return base !== undefined && (isExponential(base) || (base.type === 'SymbolNode' && base.name === 'e'));
 }
 
+/** Whether an exponential stands anywhere in a term. */
+function holdsExponential(node: Node): boolean {
+  if (isExponential(node)) return true;
+  return [...(node.args ?? []), ...(node.content ? [node.content] : [])].some(holdsExponential);
+}
+
 /** The factors of an implied product such as (10s+1)(5s+1)s. */
 function impliedFactors(node: Node): Node[] {
   const factors: Node[] = [];
@@ -168,17 +174,19 @@ export class TreeReader {
   }
 
   /**
-   * An implied product below a stroke is all of it the denominator, but for a dead time: in 2/(10s+1) e^(-3s) that can
-   * only belong to the whole fraction.
+   * An implied product below a stroke is all of it the denominator, but for a dead time at its end: in
+   * 2/(10s+1) e^(-3s) that can only belong to the whole fraction. One in the denominator's own brackets stays there.
    */
   private fraction(a: Rational, b: Rational, below: Node): TextResult<Rational> {
     if (!isImpliedProduct(below)) return quotient(a, b);
-    const factors = impliedFactors(below).filter((factor) => !isExponential(factor));
-    if (factors.length > 1)
+    const factors = impliedFactors(below);
+    const last = factors.findLastIndex((factor) => !isExponential(factor));
+    const denominator = last < 0 ? factors : factors.slice(0, last + 1);
+    if (denominator.length > 1)
       this.notes.add(
         'Factors that follow each other behind “/” without a sign are all read as the denominator. Put “·” before what is not.',
       );
-    return quotient(a, b.deadTimeS > 0 ? { ...b, deadTimeS: -b.deadTimeS } : b);
+    return quotient(a, denominator.some(holdsExponential) ? b : { ...b, deadTimeS: -b.deadTimeS });
   }
 
   /** 1/2 s is half of s. */

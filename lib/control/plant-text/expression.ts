@@ -54,5 +54,11 @@ export function readExpression(source: PlainText): TextResult<RawPlant> {
   const { num, den, deadTimeS } = read.value;
   const begin = placeOf(source, Math.max(0, source.text.search(/\S/)));
   const places = { num: begin, den: begin, deadTime: reader.deadTimePlace };
-  return ok({ num: expanded(num), den: expanded(den), deadTimeS, warnings: reader.warnings, places });
+  return ok({
+    num: expanded(num),
+    den: expanded(den),
+    deadTimeS,
+    warnings: [...tokens.value.warnings, ...reader.warnings],
+    places,
+  });
 }

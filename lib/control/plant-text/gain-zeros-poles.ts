@@ -17,8 +17,12 @@ function kindOf(label: string): Kind {
   return word === 'gain' || word === 'k' ? 'gain' : 'delay';
 }
 
+/** `P = 2/(10s+1)`: P may also be the name of the plant. */
+const NAMED_PLANT = /^\s*P\s*=[^=:]*(?:\d|[-+*/(^]\s*)s(?![\p{L}\d_])[^=:]*$/u;
+
 /** Whether a text names zeros or poles. */
 export function looksLikeGainZerosPoles(text: string): boolean {
+  if (NAMED_PLANT.test(text) && !/(gain|zero|pole|delay|time)/i.test(text)) return false;
   return /(?<![\p{L}\d_])((pole|zero)s?(?![\p{L}\d_])|[pz]\s*[:=])/iu.test(text);
 }
 

@@ -17,8 +17,9 @@ export type { Notation, ParsedPlant, PlantTextCode } from './types';
 export { validatePlant } from './validate';
 
 const LONGEST = 2000;
-/** `G(s) =` and the like before an expression. */
-const LEFT_SIDE = /^\s*\p{L}\w{0,7}\s*(?:\(\s*s\s*\)\s*)?=\s*(?=[^=\s])/u;
+/** `G(s) =`, `Y(s)/U(s) =` and the like before an expression. */
+const LEFT_SIDE =
+  /^\s*\p{L}\w{0,7}\s*(?:\(\s*s\s*\)\s*(?:\/\s*\p{L}\w{0,7}\s*\(\s*s\s*\)\s*)?)?=\s*(?=[^=\s])/u;
 
 type Read = readonly [Notation, TextResult<RawPlant>];
 

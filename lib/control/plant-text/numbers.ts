@@ -2,7 +2,7 @@ import { ok, refuse } from '../../result';
 import { placeOf, type PlainText } from './characters';
 import type { TextResult } from './types';
 
-const NUMBER = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i;
+const NUMBER = /^[+-]?(\d+(\.\d*)?|\.\d+)(e[+-]?\d+)?$/i;
 /** Also how thousands are parted, so that 1,500 may be 1.5 or 1500. */
 const THOUSANDS = /^[+-]?[1-9]\d{0,2},\d{3}$/;
 const TIME = /^(.*?)\s*(s|sec|ms|us|μs|min|h)?$/su;
@@ -56,7 +56,10 @@ export function readTimeS(part: PlainText): TextResult<number> {
  */
 export function commaMeaning(lists: readonly string[]): CommaMeaning {
   const all = lists.join('\n');
-  if (!all.includes(',') || all.includes('.')) return 'separator';
+  if (!all.includes(',')) return 'separator';
+  // [1,5; 2.5] mixes a comma between digits with another separator.
+  const mixed = lists.some((list) => /\d,\d/.test(list) && /[^,;\s](?:\s*;\s*|\s+)[^,;\s]/.test(list));
+  if (all.includes('.')) return mixed ? 'either' : 'separator';
   const parts = /,\s|\s,|,[+-]|,,|\d,\d+,\d/.test(all);
   const marks = lists.some(
     (list) => /\d,\d/.test(list) && (/[;\s]/.test(list.trim()) || /\d,0\d/.test(list)),

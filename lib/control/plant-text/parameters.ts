@@ -29,13 +29,20 @@ export function parameterName(word: string): ParameterName | undefined {
   return NAMES.find(([, pattern]) => pattern.test(word.replace(/[ -]/, '')))?.[0];
 }
 
+/** Names that a transfer function goes by: G, Gp, H, g. */
+const TRANSFER_FUNCTION = /^([FGHPW]\w{0,2}|[gh])$/;
+
 /** Whether a text is a run of `name = number`; `K = 2/(s+1)` and `G = …` are expressions. */
 export function looksLikeParameters(text: string): boolean {
   const labels = [...text.matchAll(LABEL)];
   if (labels.length === 0 || text.slice(0, labels[0].index).trim() !== '') return false;
   if (labels.length > 1) return true;
-  const name = parameterName(labels[0][1]);
-  return name === 'k' || name === 'kv' ? !/[(^*/]|\d\s*s\b/.test(text) : name !== undefined;
+  const [{ index, 0: label, 1: word }] = labels;
+  const name = parameterName(word);
+  // Tu=3 is no plant of gain 3: a single number belongs to a name, and the name has to be known.
+  const isNumber = /^\s*[+-]?[\d.,]+(?:e[+-]?\d+)?\s*$/i.test(text.slice(index + label.length));
+  if (name === undefined) return isNumber && !TRANSFER_FUNCTION.test(word);
+  return name === 'k' || name === 'kv' ? !/[(^*/]|\d\s*s\b/.test(text) : true;
 }
 
 function contradiction({ k, kv, tau1, tau2, tau3, wn, zeta }: ParameterValues): TextResult<null> {

@@ -7,7 +7,7 @@ const PLAIN_FROM = 1e-5;
 const PLAIN_BELOW = 1e7;
 const SIGNIFICANT = 6;
 
-/** The size of a number in TeX: 118.8, or 1.2\\times10^{-8} where it is very small or large. */
+/** The size of a number in TeX: 118.8, or 1.2\times10^{-8} where it is very small or large. */
 function sizeToTex(value: number, significant: number): string {
   const size = Math.abs(roundSignificant(value, significant));
   if (size === 0 || (size >= PLAIN_FROM && size < PLAIN_BELOW)) {
@@ -28,7 +28,7 @@ function powerToTex(power: number): string {
 }
 
 /**
- * A polynomial in TeX, descending powers, terms with coefficient 0 left out: `s^2+118.8\\,s+1936`.
+ * A polynomial in TeX, descending powers, terms with coefficient 0 left out: `s^2+118.8\,s+1936`.
  *
  * @param significant digits of each coefficient, 1 to 17; default 6
  */
@@ -51,7 +51,7 @@ function deadTimeToTex(deadTimeS: number, significant: number): string {
 }
 
 /**
- * A plant in TeX for a formula on the page: `\\frac{2420}{s^2+118.8\\,s+1936}\\,e^{-3s}`. Rounded for reading;
+ * A plant in TeX for a formula on the page: `\frac{2420}{s^2+118.8\,s+1936}\,e^{-3s}`. Rounded for reading;
  * plantToText keeps every digit.
  *
  * @param significant digits of each number, 1 to 17; default 6

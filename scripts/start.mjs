@@ -1,4 +1,5 @@
 // Makes a fresh machine ready and serves: packages, database, migration, demo, build, web and worker.
+// With the word “dev” it serves the sources as they are edited, without a build.
 import { randomBytes } from 'node:crypto';
 import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
@@ -64,6 +65,7 @@ async function main() {
   const { build } = await import('./lib/build.mjs');
   const { serve } = await import('./lib/serve.mjs');
 
+  const isDev = process.argv[2] === 'dev';
   const given = process.env.DATABASE_URL;
   if (given) await checkUrl(given);
   const cluster = given ? null : await startCluster();
@@ -77,8 +79,8 @@ async function main() {
     };
     await migrate(env);
     const demo = await seed(env);
-    await build();
-    served = await serve(env);
+    if (!isDev) await build();
+    served = await serve(env, { isDev });
     greet(port, demo);
     return await untilEnd(served.children);
   } finally {

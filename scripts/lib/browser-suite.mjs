@@ -32,7 +32,7 @@ export async function browserSuite(folder, env) {
   const log = openSync(logFile, 'a');
   let served = null;
   try {
-    served = await serve(own, ['ignore', log, log]);
+    served = await serve(own, { stdio: ['ignore', log, log] });
     const { code } = await packageCommand('@playwright/test/cli.js', ['test'], { env: own });
     const stats = readReport(report)?.stats;
     const result = counted(stats?.expected, stats && stats.unexpected + stats.flaky, code);

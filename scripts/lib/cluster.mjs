@@ -62,7 +62,7 @@ function settings(port, fast) {
  *
  * @param options folder: another place, for throw-away clusters; port: another than the one it had last time;
  *   fast: without writing through to the disk
- * @returns the connection string, the same for another database, and how to stop it
+ * @returns the connection string, the same for another database, the folder of its programs, and how to stop it
  */
 export async function startCluster(options = {}) {
   // Settings for other servers would bend the connections to this one.
@@ -102,10 +102,11 @@ export async function startCluster(options = {}) {
     await stop();
     throw new Sentence(`The database in ${folder} does not let us in: ${error.message}`);
   }
-  return { url: urlOf(DATABASE), urlOf, stop };
+  return { url: urlOf(DATABASE), urlOf, bin, stop };
 }
 
-async function withClient(url, work) {
+/** Does work with a connection, which is closed again. */
+export async function withClient(url, work) {
   const { default: pg } = await import('pg');
   const client = new pg.Client({ connectionString: url });
   await client.connect();

@@ -24,7 +24,7 @@ async function versionOf(folder) {
 /**
  * The folder of PostgreSQL's server programs, installed when there are none.
  *
- * @param data the cluster's data folder: one that is there already needs the major version that made it
+ * @param data the cluster's data folder, if it is for one: what is there already needs the version that made it
  */
 export async function findServer(data) {
   if (serverFolders().length === 0)
@@ -34,8 +34,8 @@ export async function findServer(data) {
     throw new Sentence(
       'PostgreSQL was installed, but its server programs are not found under /usr/lib/postgresql.',
     );
-  const versionFile = join(data, 'PG_VERSION');
-  if (!existsSync(versionFile)) return folders[0];
+  const versionFile = data && join(data, 'PG_VERSION');
+  if (!versionFile || !existsSync(versionFile)) return folders[0];
   const wanted = readFileSync(versionFile, 'utf8').trim();
   for (const folder of folders) if ((await versionOf(folder)) === wanted) return folder;
   throw new Sentence(

@@ -11,14 +11,15 @@ const UP_WITHIN_S = 60;
  * Starts web and worker, and waits until the web answers.
  *
  * @param env must be complete: addresses, secrets, PORT
- * @param stdio where their output goes, as in `spawn`
+ * @param options stdio: where their output goes, as in `spawn`; isDev: serve the sources as they are edited
  * @returns the programs that run, and how to stop them
  */
-export async function serve(env, stdio = 'inherit') {
+export async function serve(env, { stdio = 'inherit', isDev = false } = {}) {
   const next = join(root, 'node_modules/next/dist/bin/next');
-  const options = { env: { ...env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' }, stdio };
-  const heap = `--max-old-space-size=${HEAP_MB}`;
-  const web = start(process.execPath, [heap, next, 'start', '-H', '127.0.0.1', '-p', env.PORT], options);
+  const mode = isDev ? 'development' : 'production';
+  const options = { env: { ...env, NODE_ENV: mode, NEXT_TELEMETRY_DISABLED: '1' }, stdio };
+  const how = isDev ? [next, 'dev'] : [`--max-old-space-size=${HEAP_MB}`, next, 'start'];
+  const web = start(process.execPath, [...how, '-H', '127.0.0.1', '-p', env.PORT], options);
   const worker = start(process.execPath, ['--import', 'tsx', 'worker/main.ts'], options);
   const children = [web, worker];
   const end = () => Promise.all(children.map(stop));

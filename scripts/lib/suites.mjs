@@ -21,6 +21,7 @@ function testEnvironment() {
     SESSION_SECRET: 'a secret for tests alone, 32 letters+',
     PASSWORD_COST: '4',
     LOG_LEVEL: 'warn',
+    ...(process.stdout.isTTY ? {} : { NO_COLOR: '1' }),
   };
   for (const name of NOT_FOR_TESTS) delete env[name];
   return env;

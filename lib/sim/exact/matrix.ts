@@ -54,16 +54,6 @@ export function smallExponential(a: Matrix, n: number): Matrix {
   return result;
 }
 
-/** Matrix exponential by scaling and squaring. */
-export function exponential(a: Matrix, n: number): Matrix {
-  const squarings = Math.max(0, Math.ceil(Math.log2(norm(a, n) / SMALL_NORM)));
-  const scaled = new Float64Array(a);
-  for (let i = 0; i < scaled.length; i += 1) scaled[i] *= 2 ** -squarings;
-  let result = smallExponential(scaled, n);
-  for (let k = 0; k < squarings; k += 1) result = multiplySquare(result, result, n);
-  return result;
-}
-
 /**
  * Powers of two d such that D⁻¹AD has rows and columns of about equal size (Parlett and Reinsch, Numer. Math. 13
  * (1969) 293–304): coefficients of very different sizes would cost the exponential its digits.

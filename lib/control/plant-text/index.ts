@@ -13,7 +13,6 @@ import type { Notation, ParsedPlant, RawPlant, TextResult } from './types';
 import { commonFactorWarning, validatePlant } from './validate';
 
 export { plantToText } from './format';
-export { plantToTex, polynomialToTex } from './tex';
 export type { Notation, ParsedPlant, PlantTextCode } from './types';
 export { validatePlant } from './validate';
 

@@ -13,39 +13,30 @@ export interface StepProps {
   write: (change: Partial<SheetDraft>) => void;
 }
 
-function others(
-  rows: readonly SheetRow[],
-  pick: (row: SheetRow) => number | null,
-  but: string,
-): Record<string, number> {
-  const values: Record<string, number> = {};
-  for (const row of rows) {
-    const value = pick(row);
-    if (row.name !== but && value !== null) values[row.label] = value;
-  }
-  return values;
+type Expected = (row: SheetRow) => number | null;
+
+/** Each row's typed value beside what is expected of it; the other rows' values tell a swap. */
+function answersOf(
+  sheet: SheetData,
+  texts: Readonly<Record<string, string>>,
+  expected: Expected,
+): ReadBack[] {
+  return sheet.rows.map((row) => {
+    const others: Record<string, number> = {};
+    for (const other of sheet.rows) {
+      const value = expected(other);
+      if (other.name !== row.name && value !== null) others[other.label] = value;
+    }
+    return readBack(texts[row.name] ?? '', expected(row), row, others);
+  });
 }
 
-export function foundAnswers({ sheet, draft }: Pick<StepProps, 'sheet' | 'draft'>): ReadBack[] {
-  return sheet.rows.map((row) =>
-    readBack(
-      draft.asFound[row.name] ?? '',
-      row.from,
-      row,
-      others(sheet.rows, (r) => r.from, row.name),
-    ),
-  );
+export function foundAnswers(sheet: SheetData, draft: SheetDraft): ReadBack[] {
+  return answersOf(sheet, draft.asFound, ({ from }) => from);
 }
 
-export function leftAnswers({ sheet, draft }: Pick<StepProps, 'sheet' | 'draft'>): ReadBack[] {
-  return sheet.rows.map((row) =>
-    readBack(
-      draft.asLeft[row.name] ?? '',
-      row.to,
-      row,
-      others(sheet.rows, (r) => r.to, row.name),
-    ),
-  );
+export function leftAnswers(sheet: SheetData, draft: SheetDraft): ReadBack[] {
+  return answersOf(sheet, draft.asLeft, ({ to }) => to);
 }
 
 /** Is it the right device, and are the cautions read? */
@@ -115,7 +106,7 @@ export function BeforeStep({ sheet, draft, write }: StepProps) {
 
 /** What the device holds now, before anything is touched. */
 export function FoundStep({ sheet, draft, write }: StepProps) {
-  const answers = foundAnswers({ sheet, draft });
+  const answers = foundAnswers(sheet, draft);
   const differs = answers.some(({ kind }) => kind === 'different');
   return (
     <>
@@ -157,7 +148,7 @@ export function FoundStep({ sheet, draft, write }: StepProps) {
 
 /** The new values, entered one by one and read back from the device. */
 export function EnterStep({ sheet, draft, write }: StepProps) {
-  const answers = leftAnswers({ sheet, draft });
+  const answers = leftAnswers(sheet, draft);
   return (
     <>
       <h2 className="text-lg">3 Enter the new values</h2>

@@ -34,7 +34,7 @@ function missing(step: Step, sheet: SheetData, draft: SheetDraft): string | null
     return null;
   }
   if (step === 'found') {
-    const kinds = foundAnswers({ sheet, draft }).map(({ kind }) => kind);
+    const kinds = foundAnswers(sheet, draft).map(({ kind }) => kind);
     if (kinds.includes('empty') || kinds.includes('unreadable'))
       return 'Type every value that the device shows.';
     if (kinds.includes('different') && draft.asFoundRemark.trim() === '')
@@ -42,7 +42,7 @@ function missing(step: Step, sheet: SheetData, draft: SheetDraft): string | null
     return null;
   }
   if (step === 'enter') {
-    const kinds = leftAnswers({ sheet, draft }).map(({ kind }) => kind);
+    const kinds = leftAnswers(sheet, draft).map(({ kind }) => kind);
     if (kinds.includes('empty') || kinds.includes('unreadable'))
       return 'Type every value as the device shows it now.';
     return kinds.includes('different')

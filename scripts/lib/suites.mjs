@@ -21,7 +21,6 @@ function testEnvironment() {
     SESSION_SECRET: 'a secret for tests alone, 32 letters+',
     PASSWORD_COST: '4',
     LOG_LEVEL: 'warn',
-    ...(process.stdout.isTTY ? {} : { NO_COLOR: '1' }),
   };
   for (const name of NOT_FOR_TESTS) delete env[name];
   return env;
@@ -29,6 +28,7 @@ function testEnvironment() {
 
 async function vitestSuite(name, folder, env) {
   const report = join(folder, `${name}.json`);
+  const colour = process.stdout.isTTY ? {} : { NO_COLOR: '1' };
   const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`];
   const { code } = await packageCommand('vitest/vitest.mjs', ['run', '--project', name, ...reporters], {
     env,

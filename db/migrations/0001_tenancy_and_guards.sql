@@ -7,7 +7,14 @@ BEGIN
 END
 $$;
 --> statement-breakpoint
-GRANT fettle_app TO CURRENT_USER;
+DO $$
+BEGIN
+  -- On a shared server the role may be there already, and this user may be one of its members.
+  IF NOT pg_has_role(CURRENT_USER, 'fettle_app', 'MEMBER') THEN
+    GRANT fettle_app TO CURRENT_USER;
+  END IF;
+END
+$$;
 --> statement-breakpoint
 GRANT USAGE ON SCHEMA public TO fettle_app;
 --> statement-breakpoint

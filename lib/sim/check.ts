@@ -34,7 +34,8 @@ export interface CheckOptions {
 /** Two engines that differ by more than this share of the response have not checked each other. */
 const AGREED = 1e-4;
 
-const NOT_AT_REST = 'The responses do not come to rest within 200 time constants of the loop.';
+const NOT_AT_REST = 'The responses do not come to rest within the longest horizon that is searched.';
+const SAMPLED_TOO_SLOWLY = 'With this sample time the response grows without bound: sample faster.';
 const ONE_ENGINE =
   'The second engine could not follow this loop in reasonable time: this is not a check yet.';
 const DIFFERENT = 'The two engines differ by more than 1/10000 of the response: this is not a check yet.';
@@ -81,7 +82,11 @@ function responsesChecked(
     return { ...second, engines: null, warnings: [...warnings, SLEW_ALONE] };
   }
   const exact = responseFigures(source, final, horizonS, points);
-  if (!exact.ok) return { setpoint: null, load: null, engines: null, warnings: [exact.message] };
+  if (!exact.ok) {
+    const sampledOut = exact.code === 'DIVERGED' && sampleTimeS !== undefined && !actuator;
+    const why = sampledOut ? SAMPLED_TOO_SLOWLY : exact.message;
+    return { setpoint: null, load: null, engines: null, warnings: [why] };
+  }
   if (slewed) warnings.push(SLEW_LEFT_OUT);
   if (!secondEngine) return { ...exact.value, engines: null, warnings };
   if (!second) return { ...exact.value, engines: null, warnings: [...warnings, ONE_ENGINE] };

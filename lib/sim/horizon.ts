@@ -1,4 +1,5 @@
 import { openLoop } from '../control/loop';
+import { roots } from '../control/roots';
 import type { IdealController, Margins, Plant } from '../control/types';
 import { responsesOf, type ResponseSource } from './exact/responses';
 import { finalValues, type FinalValues } from './final-values';
@@ -20,12 +21,20 @@ const FIRST = 6.5;
 /** A loop rings for about this times (Ms − 1) radians of its crossover, in time constants of their own. */
 const RINGING = 1.3;
 const LEAST_DEAD_TIMES = 4;
+/** The search goes no further than this many steps of a response: more work than a look at the loop is worth. */
+const MOST_PIECES = 100_000;
 const NICE = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
 
 /** The next round length: with it the scales of a plot stand still while the gains move a little. */
 function roundUp(value: number): number {
   const decade = 10 ** Math.floor(Math.log10(value));
   const nice = NICE.find((step) => step * decade >= value * (1 - 1e-9)) ?? 10;
+  return Number((nice * decade).toPrecision(3));
+}
+
+function roundDown(value: number): number {
+  const decade = 10 ** Math.floor(Math.log10(value));
+  const nice = NICE.findLast((step) => step * decade <= value * (1 + 1e-9)) ?? 1;
   return Number((nice * decade).toPrecision(3));
 }
 
@@ -63,23 +72,36 @@ export function automaticHorizon(
   const timeConstantS = timeConstantOf(plant, controller, margins);
   const least = LEAST_DEAD_TIMES * plant.deadTimeS;
   let horizonS = Math.max(FIRST * timeConstantS, least);
+  let mostS = MOST_TIME_CONSTANTS * timeConstantS;
   for (;;) {
-    const needed = timeToRest(source, final, horizonS);
-    if (needed === 'never') break;
-    if (needed !== null && needed <= SHOWN * horizonS)
-      return { horizonS: roundUp(Math.max(needed / SHOWN, least, horizonS / 50)), settled: true };
-    if (2 * horizonS > MOST_TIME_CONSTANTS * timeConstantS) break;
+    const restS = restAfter(source, final, horizonS);
+    if (restS === null) return { horizonS: roundDown(reachedBy(source)), settled: false };
+    if (restS <= SHOWN * horizonS)
+      return { horizonS: roundUp(Math.max(restS / SHOWN, least, horizonS / 50)), settled: true };
+    // What rings in the plant without the loop moving it shows in the plant's poles alone.
+    if (2 * horizonS > mostS) mostS = Math.max(mostS, MOST_TIME_CONSTANTS * slowestMode(plant));
+    if (2 * horizonS > mostS) return { horizonS: roundUp(horizonS), settled: false };
     horizonS *= 2;
   }
-  return { horizonS: roundUp(horizonS), settled: false };
 }
 
-/** Time from which both responses are at rest; null when that is later than the time followed. */
-function timeToRest(source: ResponseSource, final: FinalValues, timeS: number): number | null | 'never' {
-  const setpoint = source.upTo('setpoint', timeS);
-  const load = source.upTo('load', timeS);
-  if (!setpoint.ok || !load.ok) return 'never';
-  const setpointRest = settledAfter(setpoint.value, final.setpoint, REST, 'final');
-  const loadRest = settledAfter(load.value, final.load, REST, 'peak');
-  return setpointRest === null || loadRest === null ? null : Math.max(setpointRest, loadRest);
+/** From when on both responses are at rest, s; Infinity when that is later, null when it is too far to follow. */
+function restAfter(source: ResponseSource, final: FinalValues, timeS: number): number | null {
+  const setpoint = source.upTo('setpoint', timeS, MOST_PIECES);
+  const load = source.upTo('load', timeS, MOST_PIECES);
+  if (!setpoint.ok || !load.ok) return null;
+  return Math.max(
+    settledAfter(setpoint.value, final.setpoint, REST, 'final') ?? Infinity,
+    settledAfter(load.value, final.load, REST, 'peak') ?? Infinity,
+  );
+}
+
+function reachedBy(source: ResponseSource): number {
+  return Math.min(source.reachedS('setpoint'), source.reachedS('load'));
+}
+
+/** Longest time constant of a decaying mode of the plant by itself, s. */
+function slowestMode(plant: Plant): number {
+  const decaying = roots(plant.den).filter(({ re }) => re < 0);
+  return Math.max(0, ...decaying.map(({ re }) => -1 / re));
 }

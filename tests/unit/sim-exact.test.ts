@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { multiply } from '../../lib/control/polynomial';
 import { idealController, type Plant } from '../../lib/control/types';
 import { ExactRefused, simulateExact, trySimulateExact } from '../../lib/sim/exact';
 
@@ -94,6 +95,48 @@ describe('with dead time', () => {
     const nonlinear = Math.max(...none.map((y, i) => Math.abs(double[i] - 2 * short[i] + y)));
     expect(difference).toBeGreaterThan(1e-4);
     expect(nonlinear).toBeLessThan(0.02 * difference);
+  });
+});
+
+describe('steps much longer than the dead time', () => {
+  it('a fast ringing plant under a slow integral loop: a dead time of a 10⁻¹⁰ of the horizon changes nothing', () => {
+    // Modes at 755 rad/s and a loop whose time constant is half an hour.
+    const den = multiply(multiply([1.76e-6, 5.65e-5, 1], [3.9e-5, 2.7e-4, 1]), [2.4e-4, 1, 0]);
+    const controller = idealController({ kp: 5.7e-4 });
+    const at = (deadTimeS: number) =>
+      simulateExact(plant([0.78], den, deadTimeS), controller, { horizonS: 12_000, points: 121 }).load;
+    const [none, short] = [at(0), at(1e-6)];
+    expectCurve(none.t, short.y, (t) => none.y[none.t.indexOf(t)], 1e-6 * none.peak);
+    // ẏ = 0.78·(1 − kp·y) once the fast modes are gone: y(∞) = 1/kp.
+    expect(none.peak * 5.7e-4).toBeCloseTo(1 - Math.exp(-12_000 * 0.78 * 5.7e-4), 4);
+  });
+});
+
+describe('sampled', () => {
+  it('integrator under P: the geometric series, straight lines between the samples', () => {
+    // y(k+1) = y(k) + h·kp·(1 − y(k)).
+    const [h, kp] = [0.5, 0.6];
+    const { setpoint } = simulateExact(plant([1], [1, 0]), idealController({ kp }), {
+      horizonS: 6,
+      points: 121,
+      sampleTimeS: h,
+    });
+    const want = (t: number) => {
+      const k = Math.floor(t / h + 1e-9);
+      const before = (1 - h * kp) ** k;
+      return 1 - before + before * kp * (t - k * h);
+    };
+    expectCurve(setpoint.t, setpoint.y, want, 1e-12);
+  });
+
+  it('the load is there at the first sample of a plant with direct path', () => {
+    // y = 0.5·(u + 1): y₀ = 0.5, u₀ = −0.5, y₁ = 0.5·(1 + u₀) …
+    const { load } = simulateExact(plant([0.5], [1]), idealController({ kp: 1 }), {
+      horizonS: 3.5,
+      points: 8,
+      sampleTimeS: 1,
+    });
+    expect(Array.from(load.u)).toEqual([-0.5, -0.5, -0.25, -0.25, -0.375, -0.375, -0.3125, -0.3125]);
   });
 });
 

@@ -49,10 +49,10 @@ export function continuousLoop(
     limited ? 1 / trackingTimeS : 0,
   ];
   const levels = levelsFor(Math.max(...rates), deadTimeS);
-  const free = new Regime(delayed ? openSpace(model) : closedSpace(model), levels, deadTimeS);
+  const free = new Regime(delayed ? openSpace(model) : closedSpace(model), levels.baseS, deadTimeS);
   const common = { order: model.n, deadTimeS, ...levels };
   const limits = [low, high];
-  const held = limited ? new Regime(heldSpace(model, limits, trackingTimeS, delayed), levels, 0) : null;
+  const held = limited ? new Regime(heldSpace(model, limits, trackingTimeS, delayed), levels.baseS, 0) : null;
   return {
     deadTimeS,
     free,

@@ -1,4 +1,3 @@
-import type { Levels } from './loop-scales';
 import { columnsOf, slopeReading, type StateSpace } from './state-space';
 import { StepLevels } from './step-levels';
 import { stepOperator, type StepOperator } from './step-operator';
@@ -21,19 +20,17 @@ export class Regime {
   readonly constantsAt: number;
   /** Does w play a part? */
   readonly driven: boolean;
-  private readonly baseS: number;
   private readonly levels: StepLevels;
   private readonly operators = new Map<number, StepOperator>();
   private readonly odd: StepOperator[] = [];
 
-  /** @param deadTimeS 0 where v does not act on the system after a dead time */
+  /** @param baseS length of level 0, s; @param deadTimeS 0 where v does not act on the system after a dead time */
   constructor(
     readonly space: StateSpace,
-    { baseS, leastLevel }: Levels,
+    private readonly baseS: number,
     private readonly deadTimeS: number,
   ) {
-    this.baseS = baseS;
-    this.levels = new StepLevels(space, baseS, leastLevel);
+    this.levels = new StepLevels(space, baseS);
     const { y, v, n } = space;
     const { stride, powers } = columnsOf(space);
     this.stride = stride;

@@ -6,12 +6,14 @@ import { ContinuousRun } from './continuous-run';
 import type { Floors } from './loop-scales';
 import { SampledRun } from './sampled-run';
 import type { StepKind } from './spaces';
-import type { Refusal, Stepper } from './stepper';
+import { MOST_PIECES, type Refusal, type Stepper } from './stepper';
 
 /** Both responses of a loop, each computed as far as it has been asked for. */
 export interface ResponseSource {
   /** A trajectory that covers at least the time from 0 to timeS; it grows with the next call. */
-  upTo(kind: StepKind, timeS: number): Result<Trajectory, Refusal>;
+  upTo(kind: StepKind, timeS: number, mostPieces?: number): Result<Trajectory, Refusal>;
+  /** How far a response has been followed, s. */
+  reachedS(kind: StepKind): number;
 }
 
 /** A response that can be extended; with the sizes it came to. */
@@ -49,14 +51,17 @@ function answer({ stepper }: Run): Result<Trajectory, Refusal> {
 function source(start: (kind: StepKind, floors?: Floors) => Run): ResponseSource {
   const runs: Partial<Record<StepKind, Run>> = {};
   return {
-    upTo: (kind, timeS) => {
+    reachedS: (kind) => runs[kind]?.stepper.timeS ?? 0,
+    upTo: (kind, timeS, mostPieces = MOST_PIECES) => {
       const run = (runs[kind] ??= start(kind));
+      run.stepper.mostPieces = mostPieces;
       run.extendTo(timeS);
       const { peakY, peakV, settings } = run.stepper;
       const yFloor = peakY > 0 ? Math.min(peakY, settings.yFloor) : settings.yFloor;
       const vFloor = peakV > 0 ? Math.min(peakV, settings.vFloor) : settings.vFloor;
       if (yFloor === settings.yFloor && vFloor === settings.vFloor) return answer(run);
       const again = (runs[kind] = start(kind, { yFloor, vFloor }));
+      again.stepper.mostPieces = mostPieces;
       again.extendTo(timeS);
       return answer(again);
     },

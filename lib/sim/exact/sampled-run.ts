@@ -45,7 +45,7 @@ export class SampledRun {
     const rate = Math.max(fastestRate(plant.den), fastestRate(filterDenominator(controller.filter)));
     const levels = levelsFor(rate, sampleTimeS);
     const { yFloor } = floors;
-    this.regime = new Regime(plantSpace(model), levels, 0);
+    this.regime = new Regime(plantSpace(model), levels.baseS, 0);
     this.stepper = new Stepper({
       ...levels,
       order: model.n,

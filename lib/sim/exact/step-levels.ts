@@ -2,18 +2,18 @@ import { norm, SMALL_NORM, smallExponential } from './matrix';
 import { columnsOf, POWERS, type Propagator, type StateSpace } from './state-space';
 
 /**
- * Propagators of one system over the lengths base·2^level: each is made of the one below, so that steps of many
- * lengths cost little more than one.
+ * Propagators of one system over the lengths base·2^level. Up to the length over which a series converges at once each
+ * has its own: built up from shorter ones it would lose the digits in which they differ from the identity. Beyond it
+ * each is made of the one below, so that steps of many lengths cost little more than one.
  */
 export class StepLevels {
   private readonly known = new Map<number, Propagator>();
   private readonly rate: number;
 
-  /** @param baseS length of level 0, s; @param lowestLevel the level that the others are usually built upon */
+  /** @param baseS length of level 0, s */
   constructor(
     private readonly space: StateSpace,
     private readonly baseS: number,
-    private readonly lowestLevel: number,
   ) {
     this.rate = norm(space.a, space.n) / space.timeUnitS;
   }
@@ -22,8 +22,8 @@ export class StepLevels {
     const found = this.known.get(level);
     if (found) return found;
     const lengthS = this.baseS * 2 ** level;
-    const fromSeries = level <= this.lowestLevel && lengthS * this.rate <= SMALL_NORM;
-    const result = fromSeries ? series(this.space, lengthS) : doubled(this.space, this.at(level - 1));
+    const small = lengthS * this.rate <= SMALL_NORM;
+    const result = small ? series(this.space, lengthS) : doubled(this.space, this.at(level - 1));
     this.known.set(level, result);
     return result;
   }

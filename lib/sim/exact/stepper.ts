@@ -32,7 +32,7 @@ export type Refusal = 'DIVERGED' | 'TOO_LONG';
 
 /** A response this many times larger than expected has left every useful range. */
 const DIVERGED = 1e12;
-const MOST_PIECES = 1_000_000;
+export const MOST_PIECES = 1_000_000;
 /** Error of the cubic of y, as a share of the largest so far. */
 const Y_ERROR = 1e-6;
 /** The same of v. Where v comes back after a dead time its errors add up: the longer, the less is allowed. */
@@ -51,6 +51,7 @@ export class Stepper {
   timeS = 0;
   level: number;
   leastLevel: number;
+  mostPieces = MOST_PIECES;
   peakY: number;
   peakV: number;
   /** v, v̇ at the start and at the end of each of the last two pieces. */
@@ -140,7 +141,7 @@ export class Stepper {
     const { peakY, peakV, trajectory, settings } = this;
     // Written so that a value that is not a number counts as too large.
     if (!(peakY <= DIVERGED * settings.yFloor && peakV <= DIVERGED * settings.vFloor)) return 'DIVERGED';
-    return trajectory.count > MOST_PIECES ? 'TOO_LONG' : null;
+    return trajectory.count > this.mostPieces ? 'TOO_LONG' : null;
   }
 
   /** How often the step has to be halved for an error that falls with its fourth power. */
@@ -207,7 +208,7 @@ export class Stepper {
       w0 = input;
       w1 = input;
     } else {
-      const margin = 1e-6 * stepS;
+      const margin = 1e-6 * Math.min(stepS, deadTimeS);
       history.after(timeS - deadTimeS, margin);
       w0 = history.value + load;
       s0 = stepS * history.slope;

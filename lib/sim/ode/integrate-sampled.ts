@@ -29,7 +29,8 @@ export function integrateSampled(
   const held: number[] = [];
   const margin = 1e-9 * Math.min(sampleTime, delay || sampleTime);
   let arrived = 0;
-  let input = 0;
+  // Without dead time the load is there at the first sample already; an output only after its sample.
+  let input = delay === 0 ? equations.excitation.load : 0;
   const inputAt = (): number => input;
   const output = (): number => held[held.length - 1];
 

@@ -1,9 +1,10 @@
 import { Breaks } from './breaks';
 import { constantOf, type ContinuousLoop, type Mode } from './continuous-loop';
+import type { LastPair, Span } from './integrator';
 import { timeOutside } from './limit-event';
 import type { Floors } from './loop-scales';
 import type { StepKind } from './spaces';
-import { Stepper, type Span } from './stepper';
+import { Stepper } from './stepper';
 
 /** Steps are made no shorter than this share of the time asked for. */
 const MOST_STEPS = 2e6;
@@ -58,16 +59,17 @@ export class ContinuousRun {
       held: isHeld ? (mode === 'low' ? low : high) : NaN,
       delayed: deadTimeS > 0 && stepper.timeS >= deadTimeS * (1 - 1e-9),
       input: 0,
-      event: held && this.changes <= MOST_CHANGES ? (s) => this.timeOfChange(s, mode) : null,
+      event: held && this.changes <= MOST_CHANGES ? (pair) => this.timeOfChange(pair, mode) : null,
     };
   }
 
-  private timeOfChange(stepper: Stepper, mode: Mode): number | null {
+  private timeOfChange(pair: LastPair, mode: Mode): number | null {
+    const { stepper } = this;
     const { low, high } = this.loop;
     const margin = MARGIN * Math.max(stepper.peakV, stepper.settings.vFloor);
-    if (mode === 'free') return timeOutside(stepper, low - margin, high + margin);
-    if (mode === 'high') return timeOutside(stepper, high - margin, Infinity);
-    return timeOutside(stepper, -Infinity, low + margin);
+    if (mode === 'free') return timeOutside(pair, low - margin, high + margin);
+    if (mode === 'high') return timeOutside(pair, high - margin, Infinity);
+    return timeOutside(pair, -Infinity, low + margin);
   }
 
   /** At the start, and where something sharp arrives: the regime that v asks for. */

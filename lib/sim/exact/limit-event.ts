@@ -1,5 +1,5 @@
 import { Cubic } from '../metrics/cubic';
-import type { Stepper } from './stepper';
+import type { LastPair } from './integrator';
 
 const cubic = new Cubic();
 const turning = new Float64Array(2);
@@ -19,8 +19,7 @@ function firstBeyond(level: number, sign: number): number {
 }
 
 /** First time within the last two pieces at which v is above `top` or below `bottom`; null where it stays between. */
-export function timeOutside(stepper: Stepper, bottom: number, top: number): number | null {
-  const { pairV, trajectory } = stepper;
+export function timeOutside({ pairV, trajectory }: LastPair, bottom: number, top: number): number | null {
   const { t, count } = trajectory;
   for (let piece = count - 2, at = 0; piece < count; piece += 1, at += 4) {
     const h = t[piece + 1] - t[piece];

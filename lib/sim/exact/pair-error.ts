@@ -1,4 +1,4 @@
-import type { Trajectory } from '../metrics';
+import type { LastPair } from './integrator';
 
 /** Errors of the cubics of a pair of pieces. */
 export interface PairError {
@@ -9,9 +9,8 @@ export interface PairError {
 /**
  * How far one cubic over the last two pieces, equally long, misses value and slope between them, as the error of each
  * piece by itself: it grows with the fourth power of the length, so that each is off by a sixteenth of what both are.
- * @param pairV v and its slope at the start and at the end of both pieces
  */
-export function pairError(trajectory: Trajectory, pairV: Float64Array, into: PairError): void {
+export function pairError({ trajectory, pairV }: LastPair, into: PairError): void {
   const { t, y0, dy0, y1, dy1 } = trajectory;
   const second = trajectory.count - 1;
   const first = second - 1;

@@ -1,11 +1,12 @@
 import { filterDenominator } from '../../control/loop';
 import type { Actuator, IdealController, Plant } from '../../control/types';
+import type { Span } from './integrator';
 import { fastestRate, floorsFor, levelsFor, trackingTime, type Floors } from './loop-scales';
 import { balanced, loopModel } from './loop-model';
 import { Regime } from './regime';
 import { SampledLaw } from './sampled-law';
 import { plantSpace, type StepKind } from './spaces';
-import { Stepper, type Span } from './stepper';
+import { Stepper } from './stepper';
 
 export interface SampledOptions {
   readonly kind: StepKind;

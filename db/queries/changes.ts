@@ -1,12 +1,14 @@
-import { aliasedTable, and, asc, desc, eq, inArray, lt } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/pg-core';
 import type { Scope } from '../../lib/auth/scope';
 import type { ChangeState } from '../../lib/change';
 import type { Transaction } from '../client';
 import { axes, changeEvents, changes, fieldReports, gainSets, machines, persons } from '../schema';
+import { before } from './cursor';
 import type { GainSetRecord } from './gain-sets';
 
-const fromSet = aliasedTable(gainSets, 'from_set');
-const toSet = aliasedTable(gainSets, 'to_set');
+const fromSet = alias(gainSets, 'from_set');
+const toSet = alias(gainSets, 'to_set');
 
 export interface ChangeLine {
   readonly id: string;
@@ -54,7 +56,7 @@ export async function listChanges(
     .where(
       and(
         eq(changes.orgId, scope.orgId),
-        after === undefined ? undefined : lt(changes.number, after),
+        before(changes.number, after),
         states ? inArray(changes.state, [...states]) : undefined,
         axisId ? eq(changes.axisId, axisId) : undefined,
       ),

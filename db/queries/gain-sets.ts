@@ -1,7 +1,8 @@
-import { and, desc, eq, lt } from 'drizzle-orm';
+import { and, desc, eq } from 'drizzle-orm';
 import type { Scope } from '../../lib/auth/scope';
 import type { Transaction } from '../client';
 import { gainSets } from '../schema';
+import { before, LARGEST_INTEGER } from './cursor';
 
 export type GainSetRecord = Omit<typeof gainSets.$inferSelect, 'orgId'>;
 
@@ -45,7 +46,7 @@ export async function listGainSets(
       and(
         eq(gainSets.orgId, scope.orgId),
         eq(gainSets.axisId, params.axisId),
-        params.after === undefined ? undefined : lt(gainSets.version, params.after),
+        before(gainSets.version, params.after),
       ),
     )
     .orderBy(desc(gainSets.version))
@@ -69,6 +70,7 @@ export async function getGainSetByVersion(
   scope: Scope,
   params: { axisId: string; version: number },
 ): Promise<GainSetRecord | null> {
+  if (params.version > LARGEST_INTEGER) return null;
   const [row] = await tx
     .select()
     .from(gainSets)

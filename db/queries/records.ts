@@ -1,9 +1,13 @@
-import { and, desc, eq, lt, sql } from 'drizzle-orm';
+import { and, desc, eq, getTableColumns, sql } from 'drizzle-orm';
 import type { Scope } from '../../lib/auth/scope';
 import type { Transaction } from '../client';
 import { auditEvents, inboxMessages, outboxMessages } from '../schema';
+import { before } from './cursor';
 
 export type AuditLine = Omit<typeof auditEvents.$inferSelect, 'orgId'>;
+
+const { orgId: _auditOrg, ...auditColumns } = getTableColumns(auditEvents);
+const { orgId: _inboxOrg, ...inboxColumns } = getTableColumns(inboxMessages);
 
 /** The audit log, newest first; `after` is the last number of the page before. */
 export async function listAuditEvents(
@@ -12,14 +16,9 @@ export async function listAuditEvents(
   params: { limit: number; after?: number },
 ): Promise<AuditLine[]> {
   return tx
-    .select()
+    .select(auditColumns)
     .from(auditEvents)
-    .where(
-      and(
-        eq(auditEvents.orgId, scope.orgId),
-        params.after === undefined ? undefined : lt(auditEvents.seq, params.after),
-      ),
-    )
+    .where(and(eq(auditEvents.orgId, scope.orgId), before(auditEvents.seq, params.after)))
     .orderBy(desc(auditEvents.seq))
     .limit(params.limit);
 }
@@ -32,7 +31,7 @@ export async function listInbox(
   params: { limit: number },
 ): Promise<InboxLine[]> {
   return tx
-    .select()
+    .select(inboxColumns)
     .from(inboxMessages)
     .where(eq(inboxMessages.orgId, scope.orgId))
     .orderBy(desc(inboxMessages.receivedAt))

@@ -1,4 +1,15 @@
-import { foreignKey, index, integer, pgTable, primaryKey, text, unique, uuid } from 'drizzle-orm/pg-core';
+import { sql } from 'drizzle-orm';
+import {
+  check,
+  foreignKey,
+  index,
+  integer,
+  pgTable,
+  primaryKey,
+  text,
+  unique,
+  uuid,
+} from 'drizzle-orm/pg-core';
 import type { ChangeAction, ChangeState } from '../../lib/change';
 import { json, moment, orgId } from './columns';
 import { gainSets } from './gain-sets';
@@ -40,11 +51,17 @@ export const changes = pgTable(
     index('changes_state').on(table.orgId, table.state),
     index('changes_axis').on(table.orgId, table.axisId),
     foreignKey({ columns: [table.orgId, table.axisId], foreignColumns: [axes.orgId, axes.id] }),
-    foreignKey({ columns: [table.orgId, table.toGainSetId], foreignColumns: [gainSets.orgId, gainSets.id] }),
     foreignKey({
-      columns: [table.orgId, table.fromGainSetId],
-      foreignColumns: [gainSets.orgId, gainSets.id],
+      name: 'changes_to',
+      columns: [table.orgId, table.axisId, table.toGainSetId],
+      foreignColumns: [gainSets.orgId, gainSets.axisId, gainSets.id],
     }),
+    foreignKey({
+      name: 'changes_from',
+      columns: [table.orgId, table.axisId, table.fromGainSetId],
+      foreignColumns: [gainSets.orgId, gainSets.axisId, gainSets.id],
+    }),
+    check('changes_safety_function', sql`${table.safetyFunction} in ('no', 'yes', 'unknown')`),
   ],
 );
 
@@ -98,11 +115,14 @@ export const fieldReports = pgTable(
     remark: text('remark').notNull().default(''),
     enteredBy: uuid('entered_by').notNull(),
     enteredByName: text('entered_by_name').notNull(),
+    /** When it was written down, by the clock of that device; null when it was sent at once. */
+    enteredAt: moment('entered_at'),
     receivedAt: moment('received_at').notNull().defaultNow(),
   },
   (table) => [
     primaryKey({ columns: [table.orgId, table.id] }),
     index('field_reports_change').on(table.orgId, table.changeId),
+    check('field_reports_kind', sql`${table.kind} in ('apply', 'verify', 'roll-back')`),
     foreignKey({ columns: [table.orgId, table.changeId], foreignColumns: [changes.orgId, changes.id] }),
   ],
 );

@@ -1,4 +1,6 @@
+import { sql } from 'drizzle-orm';
 import {
+  check,
   doublePrecision,
   foreignKey,
   integer,
@@ -67,6 +69,8 @@ export const gainSets = pgTable(
   (table) => [
     primaryKey({ columns: [table.orgId, table.id] }),
     unique('gain_sets_version').on(table.orgId, table.axisId, table.version),
+    unique('gain_sets_of_axis').on(table.orgId, table.axisId, table.id),
+    check('gain_sets_version_counts_from_1', sql`${table.version} > 0`),
     foreignKey({ columns: [table.orgId, table.axisId], foreignColumns: [axes.orgId, axes.id] }),
   ],
 );

@@ -1,5 +1,8 @@
+import { sql } from 'drizzle-orm';
 import {
+  check,
   doublePrecision,
+  index,
   foreignKey,
   integer,
   pgTable,
@@ -61,6 +64,9 @@ export const axes = pgTable(
   (table) => [
     primaryKey({ columns: [table.orgId, table.id] }),
     unique('axes_tag').on(table.orgId, table.machineId, table.tag),
+    index('axes_in_order').on(table.orgId, table.tag, table.id),
+    check('axes_sample_time', sql`${table.sampleTimeS} > 0`),
+    check('axes_actuator_slew', sql`${table.actuatorSlew} > 0`),
     foreignKey({ columns: [table.orgId, table.machineId], foreignColumns: [machines.orgId, machines.id] }),
   ],
 );

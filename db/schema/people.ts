@@ -1,5 +1,6 @@
-import { boolean, index, primaryKey, pgTable, text, uuid } from 'drizzle-orm/pg-core';
-import type { Role } from '../../lib/change';
+import { sql } from 'drizzle-orm';
+import { boolean, check, index, primaryKey, pgTable, text, uuid } from 'drizzle-orm/pg-core';
+import { ROLES, type Role } from '../../lib/change';
 import { moment, orgId } from './columns';
 
 export const organisations = pgTable('organisations', {
@@ -10,15 +11,21 @@ export const organisations = pgTable('organisations', {
   createdAt: moment('created_at').notNull().defaultNow(),
 });
 
-export const persons = pgTable('persons', {
-  id: uuid('id').primaryKey().defaultRandom(),
-  /** Lower case. */
-  email: text('email').notNull().unique(),
-  name: text('name').notNull(),
-  passwordHash: text('password_hash').notNull(),
-  createdAt: moment('created_at').notNull().defaultNow(),
-  deactivatedAt: moment('deactivated_at'),
-});
+export const persons = pgTable(
+  'persons',
+  {
+    id: uuid('id').primaryKey().defaultRandom(),
+    /** Lower case. */
+    email: text('email').notNull().unique(),
+    name: text('name').notNull(),
+    passwordHash: text('password_hash').notNull(),
+    createdAt: moment('created_at').notNull().defaultNow(),
+    deactivatedAt: moment('deactivated_at'),
+  },
+  (table) => [check('persons_email_lower_case', sql`${table.email} = lower(${table.email})`)],
+);
+
+const KNOWN_ROLES = sql.raw(`array[${ROLES.map((role) => `'${role}'`).join(', ')}]`);
 
 export const memberships = pgTable(
   'memberships',
@@ -32,6 +39,7 @@ export const memberships = pgTable(
   (table) => [
     primaryKey({ columns: [table.orgId, table.personId] }),
     index('memberships_person').on(table.personId),
+    check('memberships_roles', sql`cardinality(${table.roles}) > 0 and ${table.roles} <@ ${KNOWN_ROLES}`),
   ],
 );
 
@@ -64,6 +72,11 @@ export const apiTokens = pgTable(
     createdAt: moment('created_at').notNull().defaultNow(),
     expiresAt: moment('expires_at').notNull(),
     lastUsedAt: moment('last_used_at'),
+    revokedAt: moment('revoked_at'),
   },
-  (table) => [primaryKey({ columns: [table.orgId, table.id] })],
+  (table) => [
+    primaryKey({ columns: [table.orgId, table.id] }),
+    index('api_tokens_person').on(table.orgId, table.personId),
+    check('api_tokens_role', sql`${table.role} = any (${KNOWN_ROLES})`),
+  ],
 );

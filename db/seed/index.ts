@@ -1,9 +1,12 @@
+import { sql } from 'drizzle-orm';
 import { persons } from '../schema';
 import { withSystem } from '../tx';
 import { seedChange, type SeedCast } from './changes';
 import { BRACKWATER, NORTHGATE } from './demo-data';
 import { seedOrganisation } from './organisation';
 import { seedPlant } from './plant';
+
+const LOCK = 715_230_613;
 
 const PEOPLE = [
   { key: 'engineer', name: 'Mara Lindqvist', email: 'engineer@brackwater.example', roles: ['engineer'] },
@@ -46,9 +49,13 @@ async function seedNorthgate(password: string): Promise<void> {
  * @returns whether it was filled
  */
 export async function seedDemo(options: { password: string }): Promise<boolean> {
-  const someone = await withSystem((tx) => tx.select({ id: persons.id }).from(persons).limit(1));
-  if (someone.length > 0) return false;
-  await seedBrackwater(options.password);
-  await seedNorthgate(options.password);
-  return true;
+  return withSystem(async (tx) => {
+    // Two programs that start at once wait for each other here; the services work on connections of their own.
+    await tx.execute(sql`select pg_advisory_xact_lock(${LOCK})`);
+    const someone = await tx.select({ id: persons.id }).from(persons).limit(1);
+    if (someone.length > 0) return false;
+    await seedBrackwater(options.password);
+    await seedNorthgate(options.password);
+    return true;
+  });
 }

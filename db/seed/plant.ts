@@ -1,10 +1,9 @@
-import { eq } from 'drizzle-orm';
-import { axes, loadCases } from '../schema';
-import { withScope } from '../tx';
 import type { Scope } from '../../lib/auth/scope';
 import { parsePlantText } from '../../lib/control/plant-text';
 import { tune, type RuleId } from '../../lib/control/rules';
 import { createAxis } from '../../lib/services/axes/create-axis';
+import { saveLoadCases } from '../../lib/services/axes/save-load-cases';
+import { saveRequirement } from '../../lib/services/axes/save-requirement';
 import { keepGainSet } from '../../lib/services/gain-sets/keep-gain-set';
 import { createMachine } from '../../lib/services/machines/create-machine';
 import type { DemoMachine } from './demo-data';
@@ -52,19 +51,9 @@ async function keepVersions(scope: Scope, axisId: string, axis: DemoAxis): Promi
 
 /** An axis without versions still opens with its plants and limits. */
 async function givePlants(scope: Scope, axisId: string, axis: DemoAxis): Promise<void> {
-  await withScope(scope, async (tx) => {
-    await tx.update(axes).set({ requirement: axis.requirement }).where(eq(axes.id, axisId));
-    await tx.delete(loadCases).where(eq(loadCases.axisId, axisId));
-    await tx.insert(loadCases).values(
-      axis.loadCases.map(({ name, text }, position) => ({
-        orgId: scope.orgId,
-        axisId,
-        name,
-        position,
-        plant: { ...plantOf(text), text },
-      })),
-    );
-  });
+  const cases = axis.loadCases.map(({ name, text }) => ({ name, plant: { text } }));
+  await saveLoadCases(scope, axisId, { loadCases: cases, rowVersion: 1 });
+  await saveRequirement(scope, axisId, { requirement: axis.requirement, rowVersion: 2 });
 }
 
 /** Machines, axes and versions of a demo plant, all through the services; returned by axis tag. */

@@ -1,12 +1,27 @@
 import { eq, sql } from 'drizzle-orm';
 import type { Transaction } from '../../db/client';
 import { auditEvents, counters } from '../../db/schema';
+import type { Permitted } from '../auth/permissions';
 import type { Scope } from '../auth/scope';
+import type { ChangeAction } from '../change';
 import { chainHash } from './hash';
 
+type Subject = 'machine' | 'axis' | 'gain-set' | 'change' | 'person' | 'token' | 'organisation';
+
+/** All that the log can say was done; the words are stored, so none is ever renamed. */
+type AuditAction =
+  | 'create'
+  | 'edit'
+  | 'keep'
+  | 'revoke'
+  | 'set-up'
+  | 'sign-in'
+  | 'password'
+  | `change.${ChangeAction | 'draft'}`;
+
 export interface AuditEntry {
-  readonly action: string;
-  readonly subjectKind: 'machine' | 'axis' | 'gain-set' | 'change' | 'person' | 'token' | 'organisation';
+  readonly action: AuditAction;
+  readonly subjectKind: Subject;
   readonly subjectId: string | null;
   readonly detail?: Record<string, unknown>;
 }
@@ -37,11 +52,12 @@ export function auditContent(row: {
   };
 }
 
-/**
- * Appends one line to the organisation's audit chain, in the caller's transaction: what is not recorded does not
- * happen. The counter's row lock keeps the chain in one line.
- */
-export async function emitAudit(tx: Transaction, scope: Scope, entry: AuditEntry): Promise<void> {
+/** The counter's row lock keeps the organisation's chain in one line. */
+async function append(
+  tx: Transaction,
+  scope: Scope,
+  entry: Omit<AuditEntry, 'action'> & { action: string },
+): Promise<void> {
   const [end] = await tx
     .update(counters)
     .set({ auditSeq: sql`${counters.auditSeq} + 1` })
@@ -61,4 +77,17 @@ export async function emitAudit(tx: Transaction, scope: Scope, entry: AuditEntry
   const hash = chainHash(end.hash, auditContent(row));
   await tx.insert(auditEvents).values({ orgId: scope.orgId, ...row, previousHash: end.hash, hash });
   await tx.update(counters).set({ auditHash: hash }).where(eq(counters.orgId, scope.orgId));
+}
+
+/**
+ * Appends one line to the organisation's audit chain, in the caller's transaction: what is not recorded does not
+ * happen.
+ */
+export function emitAudit(tx: Transaction, permitted: Permitted, entry: AuditEntry): Promise<void> {
+  return append(tx, permitted, entry);
+}
+
+/** The line of an attempt that was refused; it needs no right. */
+export function emitRefusal(tx: Transaction, scope: Scope, entry: AuditEntry): Promise<void> {
+  return append(tx, scope, { ...entry, action: `${entry.action}.refused` });
 }

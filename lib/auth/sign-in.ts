@@ -1,14 +1,15 @@
-import { eq } from 'drizzle-orm';
-import { RateLimiterPostgres, RateLimiterRes } from 'rate-limiter-flexible';
-import { pool } from '../../db/client';
+import { asc, eq } from 'drizzle-orm';
 import { withSystem } from '../../db/tx';
-import { memberships, persons, sessions } from '../../db/schema';
+import { memberships, organisations, persons, sessions } from '../../db/schema';
+import { emitAudit } from '../audit/emit';
 import type { Role } from '../change';
 import { FettleError } from '../errors';
+import { countAttempt, forgetAttempt } from './attempts';
 import { passwordMatches } from './passwords';
+import { authorise } from './permissions';
+import { mintScope } from './scope';
 import { SESSION_HOURS } from './session';
 
-const WINDOW_S = 15 * 60;
 const SAME_ANSWER = 'E-mail or password is not right.';
 
 export interface SignedIn {
@@ -19,43 +20,46 @@ export interface SignedIn {
   };
 }
 
-interface Limits {
-  account: RateLimiterPostgres;
-  address: RateLimiterPostgres;
+type Account = NonNullable<Awaited<ReturnType<typeof findAccount>>>;
+
+/** The account behind an e-mail, with the first of its organisations. */
+async function findAccount(email: string) {
+  const [account] = await withSystem((tx) =>
+    tx
+      .select({
+        id: persons.id,
+        name: persons.name,
+        passwordHash: persons.passwordHash,
+        deactivatedAt: persons.deactivatedAt,
+        orgId: organisations.id,
+        onePersonShop: organisations.onePersonShop,
+        roles: memberships.roles,
+      })
+      .from(persons)
+      .innerJoin(memberships, eq(memberships.personId, persons.id))
+      .innerJoin(organisations, eq(organisations.id, memberships.orgId))
+      .where(eq(persons.email, email))
+      .orderBy(asc(organisations.createdAt), asc(organisations.id))
+      .limit(1),
+  );
+  return account && account.deactivatedAt === null ? account : null;
 }
 
-let limits: Limits | null = null;
-
-function limiter(keyPrefix: string, points: number): RateLimiterPostgres {
-  return new RateLimiterPostgres({
-    storeClient: pool(),
-    tableName: 'rate_limits',
-    tableCreated: true,
-    keyPrefix,
-    points,
-    duration: WINDOW_S,
+async function openSession({ id, name, roles, orgId, onePersonShop }: Account): Promise<string> {
+  const expiresAt = new Date(Date.now() + SESSION_HOURS * 3_600_000);
+  const scope = mintScope(orgId, { kind: 'person', id, name, roles, onePersonShop });
+  return withSystem(async (tx) => {
+    const [session] = await tx
+      .insert(sessions)
+      .values({ personId: id, orgId, expiresAt })
+      .returning({ id: sessions.id });
+    await emitAudit(tx, authorise(scope, 'account.own'), {
+      action: 'sign-in',
+      subjectKind: 'person',
+      subjectId: id,
+    });
+    return session.id;
   });
-}
-
-function signInLimits(): Limits {
-  limits ??= { account: limiter('account', 10), address: limiter('address', 60) };
-  return limits;
-}
-
-function tooMany(milliseconds: number): FettleError {
-  const minutes = Math.max(1, Math.ceil(milliseconds / 60_000));
-  return new FettleError('TOO_MANY', `Too many wrong sign-ins. Try again in ${minutes} min.`, {
-    retryAfterS: milliseconds / 1000,
-  });
-}
-
-async function consume(limit: RateLimiterPostgres, key: string): Promise<void> {
-  try {
-    await limit.consume(key);
-  } catch (refused) {
-    if (refused instanceof RateLimiterRes) throw tooMany(refused.msBeforeNext);
-    throw refused;
-  }
 }
 
 /**
@@ -67,36 +71,12 @@ async function consume(limit: RateLimiterPostgres, key: string): Promise<void> {
  */
 export async function signIn(input: { email: string; password: string; address: string }): Promise<SignedIn> {
   const email = input.email.trim().toLowerCase();
-  const { account, address } = signInLimits();
-  await consume(address, input.address);
-  await consume(account, email);
-  const [person] = await withSystem((tx) =>
-    tx
-      .select({
-        id: persons.id,
-        name: persons.name,
-        roles: memberships.roles,
-        passwordHash: persons.passwordHash,
-        deactivatedAt: persons.deactivatedAt,
-        orgId: memberships.orgId,
-      })
-      .from(persons)
-      .innerJoin(memberships, eq(memberships.personId, persons.id))
-      .where(eq(persons.email, email))
-      .limit(1),
-  );
-  const known = person && person.deactivatedAt === null ? person : null;
-  const right = await passwordMatches(input.password, known?.passwordHash ?? null);
-  if (!right || !known) throw new FettleError('UNAUTHENTICATED', SAME_ANSWER);
-  // Only wrong attempts stay counted; a right one does not wipe the address' record of the others.
-  await Promise.all([account.delete(email), address.reward(input.address)]);
-  const expiresAt = new Date(Date.now() + SESSION_HOURS * 3_600_000);
-  const [session] = await withSystem((tx) =>
-    tx
-      .insert(sessions)
-      .values({ personId: known.id, orgId: known.orgId, expiresAt })
-      .returning({ id: sessions.id }),
-  );
-  const { id, name, roles } = known;
-  return { sessionId: session.id, who: { person: { id, name, email }, roles } };
+  await countAttempt(email, input.address);
+  const account = await findAccount(email);
+  const isRight = await passwordMatches(input.password, account?.passwordHash ?? null);
+  if (!isRight || !account) throw new FettleError('UNAUTHENTICATED', SAME_ANSWER);
+  await forgetAttempt(email, input.address);
+  const sessionId = await openSession(account);
+  const { id, name, roles } = account;
+  return { sessionId, who: { person: { id, name, email }, roles } };
 }

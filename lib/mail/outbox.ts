@@ -29,7 +29,7 @@ export function peopleInRoles(tx: Transaction, scope: Scope, roles: Role[]): Pro
         eq(memberships.orgId, scope.orgId),
         arrayOverlaps(memberships.roles, roles),
         isNull(persons.deactivatedAt),
-        ne(persons.id, scope.actor.id ?? ''),
+        scope.actor.id ? ne(persons.id, scope.actor.id) : undefined,
       ),
     );
 }

@@ -1,6 +1,7 @@
 import { z } from 'zod';
+import { line, rowVersion } from './fields';
 
-const unit = z.string().trim().min(1, 'State the unit, as it stands on the display.').max(16);
+const unit = line(16, 'State the unit, as it stands on the display.');
 const number = z.number('Type a number.').min(-1e12, 'Beyond any unit.').max(1e12, 'Beyond any unit.');
 const positive = number.positive('Must be above 0.');
 
@@ -25,15 +26,15 @@ export const conventionInput = z
   });
 
 const axisFields = z.object({
-  tag: z.string().trim().min(1, 'Give the axis its tag.').max(40),
-  name: z.string().trim().min(1, 'Say what it moves or heats.').max(80),
+  tag: line(40, 'Give the axis its tag.'),
+  name: line(80, 'Say what it moves or heats.'),
   measurementUnit: unit,
   outputUnit: unit,
   actuatorLow: number.optional(),
   actuatorHigh: number.optional(),
   actuatorSlew: positive.optional(),
   sampleTimeS: positive.optional(),
-  deviceLabel: z.string().trim().max(80).default(''),
+  deviceLabel: line(80).default(''),
   convention: conventionInput,
 });
 
@@ -57,6 +58,6 @@ export const axisInput = axisFields
   .refine(perSampleNeedsTime, PER_SAMPLE);
 
 export const axisEdit = axisFields
-  .extend({ rowVersion: z.int().min(1) })
+  .extend({ rowVersion })
   .refine(limitsInOrder, LIMITS)
   .refine(perSampleNeedsTime, PER_SAMPLE);

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { validatePlant, parsePlantText } from '../control/plant-text';
 import { idealController, type Actuator, type IdealController, type Plant } from '../control/types';
 import type { Requirement } from '../requirement';
+import { isShowable, line, NOT_SHOWABLE } from './fields';
 
 /**
  * The shapes of a loop as the public API writes them, read into the objects of the control core. Infinite values are
@@ -26,7 +27,7 @@ const coefficients = z
 export const plantShape = z
   .union(
     [
-      z.object({ text: z.string().max(4000) }),
+      z.object({ text: z.string().max(4000).refine(isShowable, NOT_SHOWABLE) }),
       z.object({ num: coefficients, den: coefficients, delay: z.number().optional() }),
     ],
     { error: 'Give the plant as {num, den, delay} with lists of finite numbers, or as {text}.' },
@@ -101,9 +102,7 @@ export const requirementShape = z
   .transform((given): Requirement => given);
 
 export const loadCasesShape = z
-  .array(
-    z.object({ name: z.string().trim().min(1, 'Give the load case a name.').max(60), plant: plantShape }),
-  )
+  .array(z.object({ name: line(60, 'Give the load case a name.'), plant: plantShape }))
   .min(1, 'At least one load case is needed.')
   .max(12, 'At most 12 load cases.')
   .refine(

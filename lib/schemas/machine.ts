@@ -1,9 +1,10 @@
 import { z } from 'zod';
+import { line, paragraph, rowVersion } from './fields';
 
 export const machineInput = z.object({
-  site: z.string().trim().min(1, 'Name the site or area it stands in.').max(80),
-  name: z.string().trim().min(1, 'Give the machine a name.').max(80),
-  cautions: z.string().trim().max(2000).default(''),
+  site: line(80, 'Name the site or area it stands in.'),
+  name: line(80, 'Give the machine a name.'),
+  cautions: paragraph(2000).default(''),
 });
 
-export const machineEdit = machineInput.extend({ rowVersion: z.int().min(1) });
+export const machineEdit = machineInput.extend({ rowVersion });

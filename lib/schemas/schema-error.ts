@@ -1,5 +1,6 @@
 import type { z } from 'zod';
 import { FettleError, type FieldError } from '../errors';
+import './words';
 
 /** Malformed input is 400; a well-formed request that asks for the impossible (an improper plant, say) is 422. */
 export function schemaError(error: z.ZodError): FettleError {

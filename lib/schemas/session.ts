@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { line } from './fields';
 
 export const signInInput = z.object({
   email: z.email('Type the e-mail address of the account.').max(200),
@@ -19,8 +20,8 @@ export const changePasswordInput = z.object({
 });
 
 export const setUpInput = z.object({
-  organisation: z.string().trim().min(1, 'Give the organisation a name.').max(120),
-  name: z.string().trim().min(1, 'Give your name; it stands on what you sign.').max(120),
+  organisation: line(120, 'Give the organisation a name.'),
+  name: line(120, 'Give your name; it stands on what you sign.'),
   email: z.email('Type an e-mail address.').max(200),
   password: newPassword,
   onePersonShop: z.boolean().default(false),

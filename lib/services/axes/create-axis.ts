@@ -25,7 +25,7 @@ export function axisColumns(values: Omit<z.output<typeof axisEdit>, 'rowVersion'
 
 /** Adds an axis with its first load case, "nominal". @throws FettleError FORBIDDEN, MALFORMED, NOT_FOUND, CONFLICT */
 export async function createAxis(scope: Scope, input: unknown): Promise<{ id: string }> {
-  authorise(scope, 'machine.edit');
+  const permitted = authorise(scope, 'machine.edit');
   const { machineId, ...values } = parseInput(axisInput, input);
   const columns = axisColumns(values);
   return taken(`This machine already has an axis ${values.tag}.`, 'tag', () =>
@@ -40,7 +40,7 @@ export async function createAxis(scope: Scope, input: unknown): Promise<{ id: st
         .values({ orgId: scope.orgId, machineId, ...columns, requirement: {} })
         .returning({ id: axes.id });
       await tx.insert(loadCases).values({ orgId: scope.orgId, axisId: row.id, name: 'nominal', position: 0 });
-      await emitAudit(tx, scope, {
+      await emitAudit(tx, permitted, {
         action: 'create',
         subjectKind: 'axis',
         subjectId: row.id,

@@ -67,7 +67,7 @@ export async function applyChange(scope: Scope, id: string, input: unknown): Pro
     payload,
     also: async (context) => {
       requireNamedTechnician(context, scope);
-      await requireBaseline(context);
+      requireBaseline(context);
       payload.asFoundDifferences = await judgeAsFound(context, scope, parsed);
       await context.tx.insert(fieldReports).values({
         orgId: scope.orgId,
@@ -77,6 +77,7 @@ export async function applyChange(scope: Scope, id: string, input: unknown): Pro
         asFound: parsed.asFound,
         asLeft: parsed.asLeft,
         saved: parsed.saved,
+        enteredAt: parsed.enteredAt ? new Date(parsed.enteredAt) : null,
         remark: [parsed.asFoundRemark, parsed.remark].filter(Boolean).join('\n'),
         enteredBy: person.id,
         enteredByName: person.name,

@@ -2,7 +2,7 @@ import { FettleError } from '../../errors';
 import type { StepContext } from './take-step';
 
 /** The change was drafted from one version; if another is in service by now, what was reviewed no longer holds. */
-export async function requireBaseline({ change, axis }: StepContext): Promise<void> {
+export function requireBaseline({ change, axis }: StepContext): void {
   if (axis.inServiceGainSetId === change.fromGainSetId) return;
   throw new FettleError(
     'CONFLICT',

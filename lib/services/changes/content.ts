@@ -2,48 +2,12 @@ import { and, eq } from 'drizzle-orm';
 import type { Transaction } from '../../../db/client';
 import { axes, changes, gainSets } from '../../../db/schema';
 import type { Scope } from '../../auth/scope';
-import { digestOf } from '../../audit/hash';
-import { notFound } from '../../errors';
+import { FettleError, notFound } from '../../errors';
 import { asId } from '../../ids';
 
 export type ChangeRow = typeof changes.$inferSelect;
 export type AxisRow = typeof axes.$inferSelect;
 export type GainSetRow = typeof gainSets.$inferSelect;
-
-/** What a signature under a change stands for: the versions by their digests, and every word of the record. */
-export function contentHash(
-  change: Pick<
-    ChangeRow,
-    | 'number'
-    | 'axisId'
-    | 'reason'
-    | 'risk'
-    | 'test'
-    | 'wayBack'
-    | 'temporaryUntil'
-    | 'safetyFunction'
-    | 'siteReference'
-  >,
-  fromDigest: string | null,
-  toDigest: string,
-): string {
-  const { number, axisId, reason, risk, test, wayBack, temporaryUntil, safetyFunction, siteReference } =
-    change;
-  const until = temporaryUntil?.toISOString() ?? null;
-  return digestOf({
-    number,
-    axisId,
-    reason,
-    risk,
-    test,
-    wayBack,
-    temporaryUntil: until,
-    safetyFunction,
-    siteReference,
-    from: fromDigest,
-    to: toDigest,
-  });
-}
 
 export async function loadChange(tx: Transaction, scope: Scope, id: string): Promise<ChangeRow> {
   const [row] = await tx
@@ -70,6 +34,15 @@ export async function loadGainSet(tx: Transaction, scope: Scope, id: string): Pr
     .where(and(eq(gainSets.orgId, scope.orgId), eq(gainSets.id, asId(id, 'version'))));
   if (!row) throw notFound('version');
   return row;
+}
+
+/** Until when a temporary change holds; an end that is over would be no change at all. */
+export function endOfTemporary(until: string | undefined): Date | null {
+  if (until === undefined) return null;
+  const end = new Date(until);
+  if (end.getTime() > Date.now()) return end;
+  const message = 'A temporary change ends in the future; give a later time.';
+  throw new FettleError('INVALID', message, { fields: [{ path: 'temporaryUntil', message }] });
 }
 
 export function changeName(number: number): string {

@@ -1,22 +1,24 @@
-import { and, eq, sql } from 'drizzle-orm';
+import { eq, sql } from 'drizzle-orm';
 import { changes, counters } from '../../../db/schema';
 import { withScope } from '../../../db/tx';
+import { contentHash } from '../../audit/digest';
 import { emitAudit } from '../../audit/emit';
 import { authorise } from '../../auth/permissions';
 import { personOf, type Scope } from '../../auth/scope';
 import { FettleError } from '../../errors';
 import { createChangeInput } from '../../schemas/change';
 import { parseInput } from '../parse-input';
-import { changeName, contentHash, loadAxis, loadGainSet } from './content';
-import { appendEvent } from './take-step';
+import { appendEvent } from './append-event';
+import { changeName, endOfTemporary, loadAxis, loadGainSet } from './content';
 
 /**
  * Drafts a change from the version in service to another kept version of the same axis.
  *
- * @throws FettleError FORBIDDEN, MALFORMED, NOT_FOUND, or INVALID when the version is of another axis or in service
+ * @throws FettleError FORBIDDEN, MALFORMED, NOT_FOUND, or INVALID when the version is of another axis or in service, or
+ *   the change ends in the past
  */
 export async function createChange(scope: Scope, input: unknown): Promise<{ id: string; number: string }> {
-  authorise(scope, 'change.draft');
+  const permitted = authorise(scope, 'change.draft');
   const person = personOf(scope);
   const { axisId, gainSetId, temporaryUntil, ...words } = parseInput(createChangeInput, input);
   return withScope(scope, async (tx) => {
@@ -29,12 +31,12 @@ export async function createChange(scope: Scope, input: unknown): Promise<{ id: 
     const [{ number }] = await tx
       .update(counters)
       .set({ changeNumber: sql`${counters.changeNumber} + 1` })
-      .where(and(eq(counters.orgId, scope.orgId)))
+      .where(eq(counters.orgId, scope.orgId))
       .returning({ number: counters.changeNumber });
     const content = {
       number,
       axisId: axis.id,
-      temporaryUntil: temporaryUntil ? new Date(temporaryUntil) : null,
+      temporaryUntil: endOfTemporary(temporaryUntil),
       ...words,
     };
     const [row] = await tx
@@ -57,7 +59,7 @@ export async function createChange(scope: Scope, input: unknown): Promise<{ id: 
       remark: '',
       payload: { from: from?.version ?? null, to: to.version },
     });
-    await emitAudit(tx, scope, {
+    await emitAudit(tx, permitted, {
       action: 'change.draft',
       subjectKind: 'change',
       subjectId: row.id,

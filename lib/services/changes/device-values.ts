@@ -1,8 +1,7 @@
 import type { DeviceRow } from '../../control/forms';
+import type { Values } from '../../../db/schema';
 import { FettleError, type FieldError } from '../../errors';
 import { formatNumber } from '../../units';
-
-type Values = Readonly<Record<string, number>>;
 
 /** Share by which a device may round an entered value and still hold what was meant. */
 const ROUNDING = 0.005;

@@ -1,5 +1,5 @@
-import { and, arrayContains, eq } from 'drizzle-orm';
-import { memberships } from '../../../db/schema';
+import { and, arrayContains, eq, isNull } from 'drizzle-orm';
+import { memberships, persons } from '../../../db/schema';
 import type { Scope } from '../../auth/scope';
 import { FettleError } from '../../errors';
 import { issueInput } from '../../schemas/change';
@@ -11,11 +11,13 @@ async function requireTechnician({ tx }: StepContext, scope: Scope, technicianId
   const rows = await tx
     .select({ id: memberships.personId })
     .from(memberships)
+    .innerJoin(persons, eq(persons.id, memberships.personId))
     .where(
       and(
         eq(memberships.orgId, scope.orgId),
         eq(memberships.personId, technicianId),
         arrayContains(memberships.roles, ['technician']),
+        isNull(persons.deactivatedAt),
       ),
     );
   if (rows.length > 0) return;
@@ -27,7 +29,7 @@ function requireSiteReference({ change }: StepContext): void {
   if (change.safetyFunction === 'no' || change.siteReference !== '') return;
   throw new FettleError(
     'INVALID',
-    'The loop is, or may be, part of a safety function: the site’s own procedure comes first. Enter its reference in the change before it is issued.',
+    'The loop is, or may be, part of a safety function: the site’s own procedure comes first. Withdraw this change and draft it again with the reference of that procedure.',
   );
 }
 
@@ -40,7 +42,7 @@ export async function issueChange(scope: Scope, id: string, input: unknown): Pro
     payload: technicianId ? { technicianId } : {},
     also: async (context) => {
       requireSiteReference(context);
-      await requireBaseline(context);
+      requireBaseline(context);
       if (technicianId) await requireTechnician(context, scope, technicianId);
     },
   });

@@ -4,5 +4,5 @@ import { takeStep } from './take-step';
 
 /** Hands a draft to the approvers. */
 export async function submitChange(scope: Scope, id: string): Promise<void> {
-  await takeStep(scope, id, { action: 'submit', also: requireBaseline });
+  await takeStep(scope, id, { action: 'submit', also: async (context) => requireBaseline(context) });
 }

@@ -1,15 +1,19 @@
-import { and, desc, eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import type { Transaction } from '../../../db/client';
-import { changeEvents, changes, persons } from '../../../db/schema';
-import { withScope, withSystem } from '../../../db/tx';
-import { eventContent } from '../../audit/change-chain';
-import { emitAudit } from '../../audit/emit';
-import { chainHash } from '../../audit/hash';
-import { passwordMatches } from '../../auth/passwords';
-import { authorise } from '../../auth/permissions';
-import { personOf, type Scope } from '../../auth/scope';
-import { CHANGE_STEPS, permittedStep, signatureMeaning, type ChangeAction } from '../../change';
+import { changes } from '../../../db/schema';
+import { withScope } from '../../../db/tx';
+import { emitAudit, emitRefusal } from '../../audit/emit';
+import { authorise, type Permitted } from '../../auth/permissions';
+import type { Scope } from '../../auth/scope';
+import {
+  CHANGE_STEPS,
+  permittedStep,
+  signatureMeaning,
+  type ChangeAction,
+  type PermittedStep,
+} from '../../change';
 import { FettleError } from '../../errors';
+import { appendEvent } from './append-event';
 import { changeName, loadAxis, loadChange, type AxisRow, type ChangeRow } from './content';
 import { writeLetters } from './letters';
 
@@ -29,69 +33,33 @@ export interface StepRequest {
   readonly set?: Partial<Pick<ChangeRow, 'technicianId'>>;
   /** What else the step needs and does, in its transaction; throws to refuse. */
   readonly also?: (context: StepContext) => Promise<void>;
-  /** Asks again who signs, before anything is written; throws to refuse. */
+  /** Asks again who signs, once it is clear that the person may; throws to refuse. */
   readonly confirm?: () => Promise<void>;
 }
 
-/** The password asked for again under a signature. */
-export async function confirmPassword(scope: Scope, password: string): Promise<void> {
-  const { id } = personOf(scope);
-  const [row] = await withSystem((tx) =>
-    tx.select({ passwordHash: persons.passwordHash }).from(persons).where(eq(persons.id, id)),
-  );
-  if (await passwordMatches(password, row?.passwordHash ?? null)) return;
-  const message = 'That is not your password. Nothing was signed.';
-  throw new FettleError('FORBIDDEN', message, { fields: [{ path: 'password', message }] });
-}
-
-export async function appendEvent(
-  tx: Transaction,
+/** Whether the person may take the step, and where it leads; throws the reason why not. */
+export function judgeStep(
   scope: Scope,
   change: ChangeRow,
-  event: {
-    action: ChangeAction | 'draft';
-    role: string;
-    meaning: string | null;
-    remark: string;
-    payload: Record<string, unknown>;
-  },
-): Promise<void> {
-  const { id, name } = personOf(scope);
-  const [last] = await tx
-    .select({ seq: changeEvents.seq, hash: changeEvents.hash })
-    .from(changeEvents)
-    .where(and(eq(changeEvents.orgId, scope.orgId), eq(changeEvents.changeId, change.id)))
-    .orderBy(desc(changeEvents.seq))
-    .limit(1);
-  const row = {
-    changeId: change.id,
-    seq: (last?.seq ?? 0) + 1,
-    action: event.action,
-    byId: id,
-    byName: name,
-    byRole: event.role,
-    at: new Date(),
-    meaning: event.meaning,
-    remark: event.remark,
-    payload: event.payload,
-    contentHash: change.contentHash,
-  };
-  const previousHash = last?.hash ?? '';
-  const hash = chainHash(previousHash, eventContent(row));
-  await tx.insert(changeEvents).values({ orgId: scope.orgId, ...row, previousHash, hash });
-}
-
-async function stepIn(tx: Transaction, scope: Scope, id: string, request: StepRequest): Promise<void> {
-  const change = await loadChange(tx, scope, id);
-  const { action, remark = '', payload = {}, result } = request;
+  { action, result }: Pick<StepRequest, 'action' | 'result'>,
+): PermittedStep {
   const { roles, onePersonShop } = scope.actor;
   const isAuthor = change.authorId === scope.actor.id;
   const step = permittedStep({ state: change.state, action, roles, isAuthor, onePersonShop, result });
-  if (!step.ok) throw new FettleError(step.code === 'WRONG_STATE' ? 'CONFLICT' : 'FORBIDDEN', step.message);
-  const axis = await loadAxis(tx, scope, change.axisId);
+  if (step.ok) return step.value;
+  throw new FettleError(step.code === 'WRONG_STATE' ? 'CONFLICT' : 'FORBIDDEN', step.message);
+}
+
+/** The first of the person's roles that permits the step: the one it is signed in. */
+function roleOf(scope: Scope, action: ChangeAction): string {
+  const permitted = CHANGE_STEPS[action].roles;
+  return scope.actor.roles.find((role) => permitted.includes(role)) ?? 'author';
+}
+
+async function move(tx: Transaction, scope: Scope, change: ChangeRow, set: Partial<ChangeRow>) {
   const moved = await tx
     .update(changes)
-    .set({ state: step.value.to, rowVersion: change.rowVersion + 1, changedAt: new Date(), ...request.set })
+    .set({ ...set, rowVersion: change.rowVersion + 1, changedAt: new Date() })
     .where(
       and(
         eq(changes.orgId, scope.orgId),
@@ -101,68 +69,76 @@ async function stepIn(tx: Transaction, scope: Scope, id: string, request: StepRe
       ),
     )
     .returning();
-  if (moved.length === 0)
-    throw new FettleError(
-      'CONFLICT',
-      'Someone else acted on this change at the same moment. Load it again to see what was done.',
-    );
+  if (moved.length > 0) return moved[0];
+  throw new FettleError(
+    'CONFLICT',
+    'Someone else acted on this change at the same moment. Load it again to see what was done.',
+  );
+}
+
+async function stepIn(tx: Transaction, permitted: Permitted, id: string, request: StepRequest) {
+  const { action, remark = '', payload = {} } = request;
+  const change = await loadChange(tx, permitted, id);
+  const { to } = judgeStep(permitted, change, request);
+  const axis = await loadAxis(tx, permitted, change.axisId);
+  const moved = await move(tx, permitted, change, { state: to, ...request.set });
   await request.also?.({ tx, change, axis });
-  const permitted = CHANGE_STEPS[action].roles;
-  const role = roles.find((one) => permitted.includes(one)) ?? 'author';
-  const shop = onePersonShop && isAuthor && action === 'approve' ? { onePersonShop: true } : {};
-  await appendEvent(tx, scope, change, {
+  const { id: actorId, onePersonShop } = permitted.actor;
+  const isOwn = onePersonShop && change.authorId === actorId && action === 'approve';
+  const event = await appendEvent(tx, permitted, change, {
     action,
-    role,
+    role: roleOf(permitted, action),
     meaning: signatureMeaning(action),
     remark,
-    payload: { ...payload, ...shop, from: change.state, to: step.value.to },
+    payload: { ...payload, ...(isOwn ? { onePersonShop } : {}), from: change.state, to },
   });
-  await writeLetters(tx, scope, action, moved[0], axis, remark);
-  await emitAudit(tx, scope, {
+  await writeLetters(tx, permitted, action, moved, axis, remark);
+  const number = changeName(change.number);
+  await emitAudit(tx, permitted, {
     action: `change.${action}`,
     subjectKind: 'change',
     subjectId: change.id,
-    detail: {
-      number: changeName(change.number),
-      from: change.state,
-      to: step.value.to,
-      ...(remark ? { remark } : {}),
-    },
+    detail: { number, from: change.state, to, event, ...(remark ? { remark } : {}) },
   });
 }
 
 /** A refused attempt is itself a fact: it goes to the audit log, and nothing else is written. */
-async function recordRefusal(
+export async function recordingRefusal<T>(
   scope: Scope,
   id: string,
   action: ChangeAction,
-  error: FettleError,
-): Promise<void> {
-  await withScope(scope, async (tx) => {
-    const change = await loadChange(tx, scope, id);
-    await emitAudit(tx, scope, {
-      action: `change.${action}.refused`,
-      subjectKind: 'change',
-      subjectId: change.id,
-      detail: { number: changeName(change.number), state: change.state, because: error.message },
-    });
-  });
+  work: () => Promise<T>,
+): Promise<T> {
+  try {
+    return await work();
+  } catch (error) {
+    if (error instanceof FettleError && error.code !== 'NOT_FOUND')
+      await withScope(scope, async (tx) => {
+        const change = await loadChange(tx, scope, id);
+        await emitRefusal(tx, scope, {
+          action: `change.${action}`,
+          subjectKind: 'change',
+          subjectId: change.id,
+          detail: { number: changeName(change.number), state: change.state, because: error.message },
+        });
+      });
+    throw error;
+  }
 }
 
 /**
  * Takes one step of a change: who may, in which state, by compare-and-set, with its event, its letters and its audit
  * line in one transaction.
  *
- * @throws FettleError NOT_FOUND; FORBIDDEN by role or four eyes; CONFLICT by state or when another was faster
+ * @throws FettleError NOT_FOUND; FORBIDDEN by role, four eyes or password; CONFLICT by state or when another was faster
  */
-export async function takeStep(scope: Scope, id: string, request: StepRequest): Promise<void> {
-  try {
-    authorise(scope, 'change.step');
-    await request.confirm?.();
-    await withScope(scope, (tx) => stepIn(tx, scope, id, request));
-  } catch (error) {
-    if (error instanceof FettleError && error.code !== 'NOT_FOUND')
-      await recordRefusal(scope, id, request.action, error);
-    throw error;
-  }
+export function takeStep(scope: Scope, id: string, request: StepRequest): Promise<void> {
+  return recordingRefusal(scope, id, request.action, async () => {
+    const permitted = authorise(scope, 'change.step');
+    if (request.confirm) {
+      await withScope(scope, async (tx) => judgeStep(scope, await loadChange(tx, scope, id), request));
+      await request.confirm();
+    }
+    await withScope(scope, (tx) => stepIn(tx, permitted, id, request));
+  });
 }

@@ -1,18 +1,17 @@
-import { and, eq, notInArray, sql } from 'drizzle-orm';
-import type { Transaction } from '../../../db/client';
-import { axes, gainSets, loadCases, type StoredPlant } from '../../../db/schema';
+import { and, eq, sql } from 'drizzle-orm';
+import { axes, gainSets } from '../../../db/schema';
 import { withScope } from '../../../db/tx';
 import { emitAudit } from '../../audit/emit';
-import { digestOf } from '../../audit/hash';
+import { gainSetDigest } from '../../audit/digest';
 import { authorise } from '../../auth/permissions';
 import { personOf, type Scope } from '../../auth/scope';
 import { toDevice } from '../../control/forms';
-import { plantToText } from '../../control/plant-text';
 import { FettleError, notFound } from '../../errors';
 import { asId } from '../../ids';
 import { keepGainSetInput, type KeepGainSetInput } from '../../schemas/gain-set';
 import { loadCasesOf, type LoadCaseInput } from '../../schemas/loop';
 import { ENGINE_VERSIONS } from '../../sim/versions';
+import { storedCase, writeLoadCases } from '../axes/write-load-cases';
 import { parseInput } from '../parse-input';
 import { checkLoadCases, keptCheck, type LoadCaseChecks } from './check-load-cases';
 
@@ -23,7 +22,6 @@ export interface KeptGainSet {
 }
 
 type AxisRow = typeof axes.$inferSelect;
-type StoredCase = { name: string; plant: StoredPlant };
 
 async function findAxis(scope: Scope, axisId: string): Promise<AxisRow> {
   const [axis] = await withScope(scope, (tx) =>
@@ -34,10 +32,6 @@ async function findAxis(scope: Scope, axisId: string): Promise<AxisRow> {
   );
   if (!axis) throw notFound('axis');
   return axis;
-}
-
-function storedCase({ name, plant: { plant, text } }: LoadCaseInput): StoredCase {
-  return { name, plant: { ...plant, text: text ?? plantToText(plant) } };
 }
 
 /** Everything that the version will say, computed before the transaction so that no lock waits for arithmetic. */
@@ -66,54 +60,41 @@ function workOut(axis: AxisRow, cases: LoadCaseInput[], input: KeepGainSetInput)
     requirement,
     actuator,
     sampleTimeS: sampleTime ?? null,
+    checks: checks.checks.map(({ name, check }) => keptCheck(name, check)),
+    worstCase: checks.worst.name,
+    verdict: checks.verdict,
+    engines: ENGINE_VERSIONS,
+    reason: input.reason,
   };
   return { checks, content };
-}
-
-/** The load cases of a version become those of the axis, so that the worksheet opens where it was left. */
-async function saveLoadCases(
-  tx: Transaction,
-  scope: Scope,
-  axisId: string,
-  cases: readonly StoredCase[],
-): Promise<void> {
-  const names = cases.map(({ name }) => name);
-  await tx
-    .delete(loadCases)
-    .where(
-      and(eq(loadCases.orgId, scope.orgId), eq(loadCases.axisId, axisId), notInArray(loadCases.name, names)),
-    );
-  for (const [position, { name, plant }] of cases.entries())
-    await tx
-      .insert(loadCases)
-      .values({ orgId: scope.orgId, axisId, name, position, plant })
-      .onConflictDoUpdate({
-        target: [loadCases.orgId, loadCases.axisId, loadCases.name],
-        set: { position, plant },
-      });
 }
 
 /**
  * Keeps gains as the next version of an axis. The server computes the check itself, with both engines; the number
  * comes from the axis' row under its lock, so that there is never a gap nor a double.
  *
- * @throws FettleError FORBIDDEN, MALFORMED, NOT_FOUND, or INVALID for an unstable loop or gains that the device's form
- *   can't carry
+ * @throws FettleError FORBIDDEN, MALFORMED, NOT_FOUND, INVALID for an unstable loop or gains that the device's form can't
+ *   carry, or CONFLICT when the axis was edited while the check was being computed
  */
 export async function keepGainSet(scope: Scope, axisId: string, input: unknown): Promise<KeptGainSet> {
-  authorise(scope, 'gain-set.keep');
+  const permitted = authorise(scope, 'gain-set.keep');
   const person = personOf(scope);
   const axis = await findAxis(scope, asId(axisId, 'axis'));
   const parsed = parseInput(keepGainSetInput, input);
   const cases = loadCasesOf(parsed) ?? [];
   const { checks, content } = workOut(axis, cases, parsed);
   return withScope(scope, async (tx) => {
-    const own = and(eq(axes.orgId, scope.orgId), eq(axes.id, axis.id));
-    const [{ version }] = await tx
+    const [next] = await tx
       .update(axes)
       .set({ lastVersion: sql`${axes.lastVersion} + 1`, requirement: content.requirement })
-      .where(own)
+      .where(and(eq(axes.orgId, scope.orgId), eq(axes.id, axis.id), eq(axes.rowVersion, axis.rowVersion)))
       .returning({ version: axes.lastVersion });
+    if (!next)
+      throw new FettleError(
+        'CONFLICT',
+        'Someone edited this axis while its gains were being checked. Load it again and keep them then.',
+      );
+    const { version } = next;
     const [row] = await tx
       .insert(gainSets)
       .values({
@@ -121,18 +102,13 @@ export async function keepGainSet(scope: Scope, axisId: string, input: unknown):
         axisId: axis.id,
         version,
         ...content,
-        checks: checks.checks.map(({ name, check }) => keptCheck(name, check)),
-        worstCase: checks.worst.name,
-        verdict: checks.verdict,
-        engines: ENGINE_VERSIONS,
-        reason: parsed.reason,
-        digest: digestOf({ axisId: axis.id, version, ...content }),
+        digest: gainSetDigest({ axisId: axis.id, version, ...content }),
         createdBy: person.id,
         createdByName: person.name,
       })
       .returning({ id: gainSets.id, digest: gainSets.digest });
-    await saveLoadCases(tx, scope, axis.id, content.loadCases);
-    await emitAudit(tx, scope, {
+    await writeLoadCases(tx, scope, axis.id, content.loadCases);
+    await emitAudit(tx, permitted, {
       action: 'keep',
       subjectKind: 'gain-set',
       subjectId: row.id,

@@ -9,7 +9,7 @@ import { taken } from '../unique-name';
 
 /** @throws FettleError FORBIDDEN, MALFORMED, or CONFLICT when the site has a machine of that name */
 export async function createMachine(scope: Scope, input: unknown): Promise<{ id: string }> {
-  authorise(scope, 'machine.edit');
+  const permitted = authorise(scope, 'machine.edit');
   const values = parseInput(machineInput, input);
   return taken(`There is already a machine “${values.name}” at ${values.site}.`, 'name', () =>
     withScope(scope, async (tx) => {
@@ -17,7 +17,7 @@ export async function createMachine(scope: Scope, input: unknown): Promise<{ id:
         .insert(machines)
         .values({ orgId: scope.orgId, ...values })
         .returning({ id: machines.id });
-      await emitAudit(tx, scope, {
+      await emitAudit(tx, permitted, {
         action: 'create',
         subjectKind: 'machine',
         subjectId: row.id,

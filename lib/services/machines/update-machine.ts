@@ -12,7 +12,7 @@ import { taken } from '../unique-name';
 
 /** @throws FettleError FORBIDDEN, MALFORMED, NOT_FOUND, or CONFLICT when someone else edited it meanwhile */
 export async function updateMachine(scope: Scope, id: string, input: unknown): Promise<{ id: string }> {
-  authorise(scope, 'machine.edit');
+  const permitted = authorise(scope, 'machine.edit');
   const { rowVersion, ...values } = parseInput(machineEdit, input);
   return taken(`There is already a machine “${values.name}” at ${values.site}.`, 'name', () =>
     withScope(scope, async (tx) => {
@@ -30,7 +30,7 @@ export async function updateMachine(scope: Scope, id: string, input: unknown): P
           'Someone else edited this machine meanwhile. Load it again and repeat your edit.',
         );
       const { site, name, cautions } = before;
-      await emitAudit(tx, scope, {
+      await emitAudit(tx, permitted, {
         action: 'edit',
         subjectKind: 'machine',
         subjectId: id,

@@ -1,33 +1,46 @@
 import { and, eq, isNull } from 'drizzle-orm';
 import { persons, sessions } from '../../../db/schema';
-import { withScope, withSystem } from '../../../db/tx';
+import { withSystem } from '../../../db/tx';
 import { emitAudit } from '../../audit/emit';
-import { hashPassword, passwordMatches } from '../../auth/passwords';
+import { confirmPassword } from '../../auth/confirm-password';
+import { hashPassword } from '../../auth/passwords';
+import { authorise } from '../../auth/permissions';
 import { personOf, type Scope } from '../../auth/scope';
 import { FettleError } from '../../errors';
 import { changePasswordInput } from '../../schemas/session';
 import { parseInput } from '../parse-input';
 
-/** Sets a new password and ends every session of the person, this one too. */
+const NOT_PRESENT = { path: 'current', message: 'That is not your present password.' };
+
+/**
+ * Sets a new password and ends every session of the person, this one too.
+ *
+ * @throws FettleError MALFORMED, FORBIDDEN or TOO_MANY for a wrong present password, FORBIDDEN for a bearer token,
+ *   CONFLICT when the password was changed at the same moment
+ */
 export async function changePassword(scope: Scope, input: unknown): Promise<void> {
+  const permitted = authorise(scope, 'account.own');
   const { current, next } = parseInput(changePasswordInput, input);
   const { id } = personOf(scope);
-  const [row] = await withSystem((tx) =>
-    tx.select({ passwordHash: persons.passwordHash }).from(persons).where(eq(persons.id, id)),
-  );
-  if (!(await passwordMatches(current, row?.passwordHash ?? null))) {
-    const message = 'That is not your present password.';
-    throw new FettleError('FORBIDDEN', message, { fields: [{ path: 'current', message }] });
-  }
+  if (scope.actor.kind !== 'person')
+    throw new FettleError('FORBIDDEN', 'A token can’t change the password; sign in for that.');
+  const presentHash = await confirmPassword(scope, current, NOT_PRESENT);
   const passwordHash = await hashPassword(next);
   await withSystem(async (tx) => {
-    await tx.update(persons).set({ passwordHash }).where(eq(persons.id, id));
+    const changed = await tx
+      .update(persons)
+      .set({ passwordHash })
+      .where(and(eq(persons.id, id), eq(persons.passwordHash, presentHash)))
+      .returning({ id: persons.id });
+    if (changed.length === 0)
+      throw new FettleError(
+        'CONFLICT',
+        'Your password was changed at the same moment. Sign in with that one.',
+      );
     await tx
       .update(sessions)
       .set({ endedAt: new Date() })
       .where(and(eq(sessions.personId, id), isNull(sessions.endedAt)));
+    await emitAudit(tx, permitted, { action: 'password', subjectKind: 'person', subjectId: id });
   });
-  await withScope(scope, (tx) =>
-    emitAudit(tx, scope, { action: 'password', subjectKind: 'person', subjectId: id }),
-  );
 }

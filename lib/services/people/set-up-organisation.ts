@@ -3,6 +3,7 @@ import { counters, memberships, organisations, persons } from '../../../db/schem
 import { withSystem } from '../../../db/tx';
 import { emitAudit } from '../../audit/emit';
 import { hashPassword } from '../../auth/passwords';
+import { authorise } from '../../auth/permissions';
 import { mintScope } from '../../auth/scope';
 import { FettleError } from '../../errors';
 import { setUpInput } from '../../schemas/session';
@@ -23,11 +24,14 @@ export async function setUpOrganisation(input: unknown): Promise<{ personId: str
     const someone = await tx.select({ id: persons.id }).from(persons).limit(1);
     if (someone.length > 0)
       throw new FettleError('CONFLICT', 'This installation is already set up. Sign in instead.');
-    const [org] = await tx.insert(organisations).values({ name: organisation, onePersonShop }).returning();
+    const [org] = await tx
+      .insert(organisations)
+      .values({ name: organisation, onePersonShop })
+      .returning({ id: organisations.id });
     const [person] = await tx
       .insert(persons)
       .values({ name, email: email.toLowerCase(), passwordHash })
-      .returning();
+      .returning({ id: persons.id });
     // The first person does everything until others are invited.
     const roles = ['admin', 'engineer', 'approver', 'technician'] as const;
     await tx.insert(memberships).values({ orgId: org.id, personId: person.id, roles: [...roles] });
@@ -39,7 +43,7 @@ export async function setUpOrganisation(input: unknown): Promise<{ personId: str
       roles: [...roles],
       onePersonShop,
     });
-    await emitAudit(tx, scope, {
+    await emitAudit(tx, authorise(scope, 'organisation.set-up'), {
       action: 'set-up',
       subjectKind: 'organisation',
       subjectId: org.id,

@@ -17,7 +17,7 @@ export async function createToken(
   scope: Scope,
   input: unknown,
 ): Promise<{ id: string; token: string; expiresAt: Date }> {
-  authorise(scope, 'token.make');
+  const permitted = authorise(scope, 'token.make');
   const { name, role, days } = parseInput(tokenInput, input);
   const person = personOf(scope);
   if (scope.actor.kind !== 'person')
@@ -31,7 +31,7 @@ export async function createToken(
       .insert(apiTokens)
       .values({ orgId: scope.orgId, personId: person.id, name, role, tokenHash, expiresAt })
       .returning({ id: apiTokens.id });
-    await emitAudit(tx, scope, {
+    await emitAudit(tx, permitted, {
       action: 'create',
       subjectKind: 'token',
       subjectId: id,

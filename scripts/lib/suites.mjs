@@ -28,7 +28,6 @@ function testEnvironment() {
 
 async function vitestSuite(name, folder, env) {
   const report = join(folder, `${name}.json`);
-  const colour = process.stdout.isTTY ? {} : { NO_COLOR: '1' };
   const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`];
   const { code } = await packageCommand('vitest/vitest.mjs', ['run', '--project', name, ...reporters], {
     env,

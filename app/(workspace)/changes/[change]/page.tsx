@@ -55,12 +55,12 @@ function Words({ record }: { record: ChangeRecord }) {
 export default async function ChangePage({ params }: { params: Promise<{ change: string }> }) {
   const { scope, roles, person, organisation } = await requireSession();
   const { change: id } = await params;
-  const { record, technicians, chain } = await withScope(scope, async (tx) => ({
-    record: isId(id) ? await getChange(tx, scope, { id }) : null,
-    chain: isId(id) ? await verifyChangeEvents(tx, scope, id) : null,
+  const record = isId(id) ? await withScope(scope, (tx) => getChange(tx, scope, { id })) : null;
+  if (!record) notFound();
+  const { technicians, chain } = await withScope(scope, async (tx) => ({
+    chain: await verifyChangeEvents(tx, scope, record.change.id),
     technicians: await listPeople(tx, scope, { role: 'technician' }),
   }));
-  if (!record) notFound();
   const { change, axis, machine, from, to, events, reports } = record;
   const { onePersonShop } = organisation;
   const isAuthor = change.authorId === person.id;

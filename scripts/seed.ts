@@ -1,7 +1,6 @@
 import { eq } from 'drizzle-orm';
 import { closeDatabase } from '../db/client';
 import { persons } from '../db/schema';
-import { seedDemo } from '../db/seed';
 import { withSystem } from '../db/tx';
 import { passwordMatches } from '../lib/auth/passwords';
 import { environment } from '../lib/env';
@@ -20,7 +19,11 @@ async function demoState(password: string): Promise<'none' | 'known' | 'changed'
 
 await tell(async () => {
   const { DEMO, DEMO_PASSWORD } = environment();
-  if (DEMO === 'on') await seedDemo({ password: DEMO_PASSWORD });
+  const before = await demoState(DEMO_PASSWORD);
+  if (DEMO === 'off' || before !== 'none') return before;
+  // Loaded only now: the demo is written through all of the services, and later starts do without them.
+  const { seedDemo } = await import('../db/seed');
+  await seedDemo({ password: DEMO_PASSWORD });
   return demoState(DEMO_PASSWORD);
 });
 await closeDatabase();

@@ -44,17 +44,16 @@ function greet(port, demo) {
 }
 
 /** Waits until asked to stop, or until one of the programs ends by itself, which is a failure. */
-function untilEnd([web, worker]) {
-  return new Promise((resolve) => {
-    stopSignal.addEventListener('abort', () => resolve(0));
-    if (stopSignal.aborted) resolve(0);
+async function untilEnd([web, worker]) {
+  const first = await new Promise((resolve) => {
+    stopSignal.addEventListener('abort', () => resolve(null));
+    if (stopSignal.aborted) resolve(null);
     for (const [name, child] of Object.entries({ web, worker }))
-      child.once('exit', (code, signal) => {
-        if (stopSignal.aborted) return;
-        say(`The ${name} ended by itself (${signal ?? `code ${code}`}); stopping the rest.`);
-        resolve(1);
-      });
+      child.once('exit', (code, signal) => resolve(`${name} ended by itself (${signal ?? `code ${code}`})`));
   });
+  if (!first) return 0;
+  say(`The ${first}; stopping the rest.`);
+  return 1;
 }
 
 async function main() {

@@ -4,12 +4,13 @@ import { join } from 'node:path';
 import { packageCommand, root } from './processes.mjs';
 import { say, Sentence } from './say.mjs';
 
-/** All that the build reads; what a change of must lead to another build. */
+/** All that the build reads or checks the types of; a change in any of it leads to another build. */
 const SOURCES = [
   'app',
   'components',
   'db',
   'lib',
+  'worker',
   'public',
   'instrumentation.ts',
   'proxy.ts',
